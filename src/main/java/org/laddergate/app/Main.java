@@ -1,0 +1,6 @@
+package org.laddergate.app;
+
+public final class Main {
+    private Main() {}
+    public static void main(String[] args) { System.out.println("laddergate"); }
+}

@@ -1,0 +1,2 @@
+/** Main program, commands, configuration and wiring. */
+package org.laddergate.app;

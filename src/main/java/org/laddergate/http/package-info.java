@@ -1,0 +1,2 @@
+/** Routes, JSON, problem details and the served OpenAPI document. */
+package org.laddergate.http;
