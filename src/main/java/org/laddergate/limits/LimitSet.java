@@ -16,10 +16,11 @@ import org.laddergate.measurement.Recipe;
  * @param settings      decision settings it was learnt with
  * @param goldenUnits   number of golden units it was learnt from
  * @param regionLimits  one per region, in the order of the heat path
+ * @param model         the golden family as numbers
  * @param remarks       warnings and notes of the learning, for people
  */
 public record LimitSet(String product, int revision, LimitState state, String sha256, Instant learntAt, Recipe recipe,
-        DecisionSettings settings, int goldenUnits, List<RegionLimit> regionLimits, List<String> remarks) {
+        DecisionSettings settings, int goldenUnits, List<RegionLimit> regionLimits, GoldenModel model, List<String> remarks) {
 
     public LimitSet {
         regionLimits = List.copyOf(regionLimits);

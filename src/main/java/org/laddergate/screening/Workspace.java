@@ -1,0 +1,38 @@
+package org.laddergate.screening;
+
+import org.laddergate.limits.evidence.EvidenceModel;
+import org.laddergate.measurement.ComparisonBins;
+import org.laddergate.measurement.LogTimeBins;
+
+/** Scratch arrays for judging one measurement at a time; one per thread and plan. Not thread-safe. */
+final class Workspace {
+    final double[] binned;
+    final int[] counts;
+    final double[] fine;
+    final double[] deviation;
+    final double[] compared;
+    final double[] whitened;
+    final double[] discounted;
+    final double[] discountedShape;
+    final double[] scratch;
+    final double[] explanationLog;
+    final double[] subjectLog;
+    final double[] posterior;
+
+    Workspace(LogTimeBins bins, ComparisonBins comparison, EvidenceModel evidence) {
+        int n = bins.size();
+        int freedom = evidence.family().freedom();
+        binned = new double[n];
+        counts = new int[n];
+        fine = new double[n];
+        deviation = new double[n];
+        compared = new double[comparison.size()];
+        whitened = new double[freedom];
+        discounted = new double[freedom];
+        discountedShape = new double[freedom];
+        scratch = new double[Math.max(freedom, n)];
+        explanationLog = new double[evidence.explanationCount()];
+        subjectLog = new double[evidence.subjects().size()];
+        posterior = new double[evidence.subjects().size()];
+    }
+}
