@@ -37,4 +37,18 @@ public record GoldenModel(double firstEdgeSeconds, double lastEdgeSeconds, int b
     public GoldenModel {
         signatures = List.copyOf(signatures);
     }
+
+    /** The same model with another limit of the shape test. */
+    public GoldenModel withShapeLimit(double limit) {
+        return new GoldenModel(firstEdgeSeconds, lastEdgeSeconds, binsPerDecade, goldenKelvin, noiseKelvin,
+                comparisonNoiseKelvin, familyFactors, inFamilyLimit, limit, networkResistances, networkTimeConstants,
+                signatures, fromLayers, spectrum, envelope);
+    }
+
+    /** The same model with a golden spectrum and the band of the structure function. */
+    public GoldenModel withStructure(double[] goldenSpectrum, Envelope band) {
+        return new GoldenModel(firstEdgeSeconds, lastEdgeSeconds, binsPerDecade, goldenKelvin, noiseKelvin,
+                comparisonNoiseKelvin, familyFactors, inFamilyLimit, shapeLimit, networkResistances,
+                networkTimeConstants, signatures, fromLayers, goldenSpectrum, band);
+    }
 }

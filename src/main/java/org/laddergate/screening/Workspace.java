@@ -9,6 +9,7 @@ final class Workspace {
     final double[] binned;
     final int[] counts;
     final double[] fine;
+    final double[] correction;
     final double[] deviation;
     final double[] compared;
     final double[] whitened;
@@ -25,6 +26,7 @@ final class Workspace {
         binned = new double[n];
         counts = new int[n];
         fine = new double[n];
+        correction = new double[n];
         deviation = new double[n];
         compared = new double[comparison.size()];
         whitened = new double[freedom];

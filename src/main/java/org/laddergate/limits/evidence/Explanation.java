@@ -146,14 +146,19 @@ public final class Explanation {
         }
     }
 
+    /** Whitened signature at size 1; must not be modified. */
+    public double[] whitenedShape() {
+        return whitenedShape;
+    }
+
     /** Length of the whitened signature: its size in sigmas at size 1, the matched filter's signal-to-noise ratio [1]. */
     public double signalToNoise() {
         return Math.sqrt(shapeSquared);
     }
 
-    /** Generalised least squares size of the signature in a deviation, in units of the signature [1]. */
+    /** Generalised least squares size of the signature in a deviation, in units of the signature; 1 for a free explanation [1]. */
     public double size(double[] whitened) {
-        return dot(whitenedShape, whitened) / shapeSquared;
+        return shapeSquared > 0 ? dot(whitenedShape, whitened) / shapeSquared : 1;
     }
 
     static double dot(double[] a, double[] b) {

@@ -1,0 +1,193 @@
+package org.laddergate.screening;
+
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.List;
+import java.util.Locale;
+import java.util.Optional;
+import org.apache.commons.statistics.distribution.NormalDistribution;
+import org.laddergate.limits.FaultSignature;
+import org.laddergate.limits.RegionLimit;
+import org.laddergate.limits.evidence.EvidenceModel;
+import org.laddergate.limits.evidence.Explanation;
+import org.laddergate.limits.evidence.FamilyModel;
+import org.laddergate.limits.evidence.Subject;
+
+/**
+ * Reads the regions' resistances off the whitened deviation in a workspace.
+ *
+ * <p>For a healthy part every region is read with everything else in family. When a fault is named, its region is read
+ * off the signatures that explain the curve, weighted by their evidence, and the other regions are read from what the
+ * named fault leaves: otherwise one fault would show in every region.
+ */
+final class RegionReading {
+    private static final NormalDistribution NORMAL = NormalDistribution.of(0, 1);
+    /** A second fault must stand out of what the first leaves by this many sigma. */
+    private static final double SECOND_FAULT_SIGMAS = 5;
+
+    private final Plan plan;
+    private final Workspace work;
+
+    RegionReading(Plan plan, Workspace work) {
+        this.plan = plan;
+        this.work = work;
+    }
+
+    /** The reason if a region's resistance is outside its acceptance limits. */
+    Optional<Reason> brokenLimit(RegionPlan region, double noiseRatio) {
+        double r = region.resistanceKelvinPerWatt(work.whitened);
+        RegionLimit limit = region.limit();
+        double guard = guard(limit, noiseRatio);
+        boolean high = r > limit.upperKelvinPerWatt() - guard;
+        if (!high && r >= limit.lowerKelvinPerWatt() + guard) {
+            return Optional.empty();
+        }
+        double bound = high ? limit.upperKelvinPerWatt() - guard : limit.lowerKelvinPerWatt() + guard;
+        return Optional.of(new Reason(high ? "resistance_above_limit" : "resistance_below_limit",
+                String.format(Locale.ROOT, "Region %s reads %.5g K/W with all else in family, %s its limit of %.5g K/W.",
+                        region.name(), r, high ? "above" : "below", bound), r, bound));
+    }
+
+    private double guard(RegionLimit limit, double noiseRatio) {
+        double w = NORMAL.inverseSurvivalProbability(plan.limits().settings().specificRisk())
+                * limit.uncertaintyKelvinPerWatt() * Math.max(1, noiseRatio);
+        return switch (plan.limits().settings().rule()) {
+            case SIMPLE_ACCEPTANCE -> 0;
+            case GUARDED_ACCEPTANCE -> w;
+            case GUARDED_REJECTION -> -w;
+        };
+    }
+
+    /** Results of all regions; with a named subject they are read conditional on its fault. */
+    List<RegionResult> results(Optional<Integer> named, double noiseRatio) {
+        List<RegionResult> out = new ArrayList<>(plan.regions().size());
+        Optional<Explanation> best = named.map(this::bestExplanation);
+        double size = best.map(e -> e.size(work.whitened)).orElse(0.0);
+        best.ifPresent(e -> e.discountInto(size, work.whitened, work.discounted));
+        for (RegionPlan region : plan.regions()) {
+            if (!region.limit().assessed()) {
+                out.add(unread(region));
+                continue;
+            }
+            int subject = subjectOf(region.name());
+            double resistance;
+            double uncertainty;
+            if (best.isEmpty()) {
+                resistance = region.resistanceKelvinPerWatt(work.whitened);
+                uncertainty = region.limit().uncertaintyKelvinPerWatt();
+            } else if (named.get() == subject) {
+                double[] excess = namedExcess(subject);
+                resistance = region.limit().goldenMeanKelvinPerWatt() + excess[0];
+                uncertainty = Math.hypot(region.limit().uncertaintyKelvinPerWatt(), excess[1]);
+            } else {
+                double[] shape = region.whitenedPerKelvinPerWatt();
+                best.get().discountInto(size, shape, work.discountedShape);
+                double information = dot(shape, work.discountedShape);
+                resistance = region.limit().goldenMeanKelvinPerWatt() + dot(shape, work.discounted) / information;
+                uncertainty = Math.sqrt(Math.max(1 / information - region.ownVariance(),
+                        region.limit().uncertaintyKelvinPerWatt() * region.limit().uncertaintyKelvinPerWatt()));
+            }
+            out.add(result(region, resistance, uncertainty * Math.max(1, noiseRatio), work.posterior[subject]));
+        }
+        return out;
+    }
+
+    /** Mean and standard deviation of the named region's excess resistance over its explanations [K/W]. */
+    private double[] namedExcess(int subject) {
+        EvidenceModel evidence = plan.evidence();
+        double sum = 0;
+        double mean = 0;
+        double square = 0;
+        for (int e = evidence.firstExplanation(subject); e < evidence.firstExplanation(subject + 1); e++) {
+            Explanation explanation = evidence.explanation(e);
+            double weight = Math.exp(work.explanationLog[e] - work.subjectLog[subject]);
+            if (weight > 1e-6 && explanation.signature().isPresent()) {
+                FaultSignature s = explanation.signature().get();
+                double added = explanation.size(work.whitened) * s.addedResistanceKelvinPerWatt();
+                double own = s.addedResistanceKelvinPerWatt() / explanation.signalToNoise();
+                sum += weight;
+                mean += weight * added;
+                square += weight * (added * added + own * own);
+            }
+        }
+        mean /= sum;
+        return new double[] {mean, Math.sqrt(Math.max(0, square / sum - mean * mean))};
+    }
+
+    /** Regions that still stand out when the named fault is allowed for, largest first. */
+    List<String> otherSuspects(int named) {
+        Explanation best = bestExplanation(named);
+        double size = best.size(work.whitened);
+        best.discountInto(size, work.whitened, work.discounted);
+        record Suspect(String region, double sigmas) {}
+        List<Suspect> suspects = new ArrayList<>();
+        for (RegionPlan region : plan.regions()) {
+            if (region.limit().assessed() && subjectOf(region.name()) != named) {
+                double sigmas = standsOut(subjectOf(region.name()), best, size);
+                if (sigmas > SECOND_FAULT_SIGMAS) {
+                    suspects.add(new Suspect(region.name(), sigmas));
+                }
+            }
+        }
+        suspects.sort(Comparator.comparingDouble(Suspect::sigmas).reversed());
+        return suspects.stream().map(Suspect::region).toList();
+    }
+
+    /** Largest score, in sigmas, of any signature of a subject in what the best explanation leaves. */
+    private double standsOut(int subject, Explanation best, double size) {
+        EvidenceModel evidence = plan.evidence();
+        double largest = 0;
+        for (int e = evidence.firstExplanation(subject); e < evidence.firstExplanation(subject + 1); e++) {
+            double[] shape = evidence.explanation(e).whitenedShape();
+            best.discountInto(size, shape, work.discountedShape);
+            double information = dot(shape, work.discountedShape);
+            largest = Math.max(largest, dot(shape, work.discounted) / Math.sqrt(information));
+        }
+        return largest;
+    }
+
+    List<RegionResult> unread() {
+        return plan.regions().stream().map(this::unread).toList();
+    }
+
+    private RegionResult unread(RegionPlan region) {
+        RegionLimit limit = region.limit();
+        return new RegionResult(region.name(), limit.region().role(), false, Double.NaN, Double.NaN,
+                limit.lowerKelvinPerWatt(), limit.upperKelvinPerWatt(), Double.NaN, Double.NaN);
+    }
+
+    private RegionResult result(RegionPlan region, double resistance, double uncertainty, double faultProbability) {
+        RegionLimit limit = region.limit();
+        double conforming = NORMAL.cumulativeProbability((limit.upperKelvinPerWatt() - resistance) / uncertainty)
+                - NORMAL.cumulativeProbability((limit.lowerKelvinPerWatt() - resistance) / uncertainty);
+        return new RegionResult(region.name(), limit.region().role(), true, resistance, uncertainty,
+                limit.lowerKelvinPerWatt(), limit.upperKelvinPerWatt(), conforming, faultProbability);
+    }
+
+    private Explanation bestExplanation(int subject) {
+        EvidenceModel evidence = plan.evidence();
+        int best = evidence.firstExplanation(subject);
+        for (int e = best; e < evidence.firstExplanation(subject + 1); e++) {
+            best = work.explanationLog[e] > work.explanationLog[best] ? e : best;
+        }
+        return evidence.explanation(best);
+    }
+
+    private int subjectOf(String region) {
+        List<Subject> subjects = plan.evidence().subjects();
+        for (int s = 0; s < subjects.size(); s++) {
+            if (subjects.get(s).name().equals(region)) {
+                return s;
+            }
+        }
+        throw new IllegalStateException("no subject " + region);
+    }
+
+    private static double dot(double[] a, double[] b) {
+        double sum = 0;
+        for (int i = 0; i < a.length; i++) {
+            sum += a[i] * b[i];
+        }
+        return sum;
+    }
+}
