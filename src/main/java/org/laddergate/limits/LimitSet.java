@@ -26,4 +26,10 @@ public record LimitSet(String product, int revision, LimitState state, String sh
         regionLimits = List.copyOf(regionLimits);
         remarks = List.copyOf(remarks);
     }
+
+    /** The same limit set in another state of its life. */
+    public LimitSet in(LimitState other) {
+        return new LimitSet(product, revision, other, sha256, learntAt, recipe, settings, goldenUnits, regionLimits, model,
+                remarks);
+    }
 }
