@@ -25,8 +25,8 @@ import org.laddergate.thermal.FosterNetwork;
  */
 final class FaultLibrary {
     private static final double[] GROWTHS = {0.25, 1, 4};
-    private static final double[] CENTRE_SHARES = {0.02, 0.05, 0.1, 0.2, 0.4};
-    private static final double[] EDGE_SHARES = {0.05, 0.12, 0.25, 0.45};
+    private static final double[] CENTRE_SHARES = {0.02, 0.035, 0.06, 0.1, 0.16, 0.25, 0.4};
+    private static final double[] EDGE_SHARES = {0.04, 0.08, 0.15, 0.25, 0.45};
 
     private final StackModel stack;
     private final double[] parameters;

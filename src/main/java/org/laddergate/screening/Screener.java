@@ -26,6 +26,9 @@ public final class Screener {
     /** Changes whenever the same curve and limits could give another number. */
     public static final String ALGORITHM_VERSION = "1";
 
+    /** A part is measured again, instead of failed, only when an error of the measurement is this probable. */
+    static final double CERTAIN_ENOUGH = 0.9;
+
     private final Plan plan;
     private final Workspace work;
     private final RegionReading reading;
@@ -90,7 +93,7 @@ public final class Screener {
                 wrongMeasurement += work.posterior[s];
             }
         }
-        if (wrongMeasurement > 0.5) {
+        if (wrongMeasurement > CERTAIN_ENOUGH) {
             int error = mostProbable(kind -> kind == Subject.Kind.MEASUREMENT);
             return doubtful(evidence.subjects().get(error), wrongMeasurement, tSquared, structure, noiseRatio);
         }
@@ -157,7 +160,7 @@ public final class Screener {
                 + "part; probability %.3f.", error.name().replace('_', ' '), probability);
         return judgement(Outcome.INVALID, Disposition.RETEST, "", List.of(), Double.NaN,
                 reading.results(Optional.empty(), noiseRatio), structure, tSquared,
-                List.of(new Reason(error.name(), sentence, probability, 0.5)));
+                List.of(new Reason(error.name(), sentence, probability, CERTAIN_ENOUGH)));
     }
 
     private Judgement fixture(Subject region, double probability, double tSquared, StructureReading structure,
@@ -166,7 +169,7 @@ public final class Screener {
                 region.name(), probability);
         return judgement(Outcome.INVALID, Disposition.RETEST, "", List.of(), Double.NaN,
                 reading.results(Optional.empty(), noiseRatio), structure, tSquared,
-                List.of(new Reason(InvalidReason.FIXTURE_SHIFT.code(), sentence, probability, 0.5)));
+                List.of(new Reason(InvalidReason.FIXTURE_SHIFT.code(), sentence, probability, CERTAIN_ENOUGH)));
     }
 
     private Judgement invalid(List<Finding> findings) {

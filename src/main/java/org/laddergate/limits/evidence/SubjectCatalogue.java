@@ -29,12 +29,12 @@ final class SubjectCatalogue {
     /** The same for a fault of unknown shape: only its start is certain. */
     private static final double UNKNOWN_SHAPE_BEND = 0.5;
     private static final double UNKNOWN_SHAPE_BEND_LENGTH = 1.5;
-    private static final double SIZE_SPREAD = 0.4;
+    private static final double SIZE_SPREAD = 0.25;
     private static final double WEIGHT_UNKNOWN_SHAPE = 0.1;
     private static final double WEIGHT_UNKNOWN_SHAPE_WITHOUT_LAYERS = 0.6;
     private static final double WEIGHT_THINNER = 0.05;
 
-    private static final double PRIOR_EACH_MEASUREMENT_ERROR = 0.001;
+    private static final double PRIOR_EACH_MEASUREMENT_ERROR = 2e-4;
     private static final double PRIOR_OTHER_PRODUCT = 2e-4;
     private static final double PRIOR_UNEXPLAINED_OF_FAULTS = 0.05;
 
@@ -139,7 +139,7 @@ final class SubjectCatalogue {
     }
 
     private List<Explanation> timebaseErrors() {
-        double[] errors = {0.005, 0.02, 0.1, 0.3, -0.005, -0.02, -0.1, -0.3};
+        double[] errors = {0.01, 0.03, 0.1, 0.3, -0.01, -0.03, -0.1, -0.3};
         return DoubleStream.of(errors).mapToObj(
                 e -> response(t -> rise(t * (1 + e), recipe.heatingSeconds()), 1.0 / errors.length, 0.5, 0.03, 1))
                 .toList();
