@@ -1,3 +1,0 @@
-package org.laddergate;
-import org.junit.jupiter.api.Test;
-class SmokeTest { @Test void t() {} }
