@@ -94,7 +94,7 @@ final class FaultLibrary {
 
     private double[] curve(FosterNetwork network) {
         double[] out = new double[fineTimes.length];
-        Responses.coolingInto(network, recipe.heatingPowerWatts(), recipe.heatingSeconds(), fineTimes, out);
+        Responses.coolingInto(network, recipe.heatingPowerWatts(), recipe.pulseSeconds(), fineTimes, out);
         return out;
     }
 

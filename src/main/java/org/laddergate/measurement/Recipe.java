@@ -35,6 +35,14 @@ public record Recipe(CurveKind curve, double heatingPowerWatts, double heatingSe
         }
     }
 
+    /**
+     * Heating pulse before the cooling curve that a measurement is brought to [s]: a heating curve is mirrored into the
+     * cooling curve after an infinite pulse.
+     */
+    public double pulseSeconds() {
+        return curve == CurveKind.HEATING ? Double.POSITIVE_INFINITY : heatingSeconds;
+    }
+
     public static Recipe of(CurveKind curve, double heatingPowerWatts, double heatingSeconds, double cutSeconds,
             double recordSeconds) {
         return new Recipe(curve, heatingPowerWatts, heatingSeconds, cutSeconds, recordSeconds,

@@ -127,7 +127,7 @@ final class SubjectCatalogue {
         List<Explanation> all = new ArrayList<>();
         for (int i = 0; i < steps; i++) {
             double delay = cut / 8 * Math.pow(1.5, i);
-            all.add(response(t -> rise(t + delay, recipe.heatingSeconds()), 1.0 / steps, 0.25, 0.03, 1));
+            all.add(response(t -> rise(t + delay, recipe.pulseSeconds()), 1.0 / steps, 0.25, 0.03, 1));
         }
         return all;
     }
@@ -141,12 +141,12 @@ final class SubjectCatalogue {
     private List<Explanation> timebaseErrors() {
         double[] errors = {0.01, 0.03, 0.1, 0.3, -0.01, -0.03, -0.1, -0.3};
         return DoubleStream.of(errors).mapToObj(
-                e -> response(t -> rise(t * (1 + e), recipe.heatingSeconds()), 1.0 / errors.length, 0.5, 0.03, 1))
+                e -> response(t -> rise(t * (1 + e), recipe.pulseSeconds()), 1.0 / errors.length, 0.5, 0.03, 1))
                 .toList();
     }
 
     private List<Explanation> pulseErrors() {
-        double nominal = recipe.heatingSeconds();
+        double nominal = recipe.pulseSeconds();
         double base = Double.isInfinite(nominal) ? 10 * model.lastEdgeSeconds() : nominal;
         double[] factors = {0.02, 0.05, 0.1, 0.2, 0.35, 0.5, 0.7, 0.85, 1.15, 1.5, 2.5};
         return DoubleStream.of(factors)
@@ -169,7 +169,7 @@ final class SubjectCatalogue {
     }
 
     private Explanation response(DoubleUnaryOperator wrong, double weight, double spread, double bend, double size) {
-        double[] right = DoubleStream.of(fineTimes).map(t -> rise(t, recipe.heatingSeconds())).toArray();
+        double[] right = DoubleStream.of(fineTimes).map(t -> rise(t, recipe.pulseSeconds())).toArray();
         double[] shape = new double[right.length];
         for (int i = 0; i < shape.length; i++) {
             shape[i] = wrong.applyAsDouble(fineTimes[i]) - right[i];
