@@ -28,16 +28,17 @@ final class FamilyFactors {
      * @param deviations golden units' deviations from a golden mean in comparison bins [K]; their own mean is removed
      * @param noise      noise in comparison bins [K]
      * @param golden     golden mean in comparison bins [K]
+     * @param logTimes   ln of the comparison bin centres
      * @return factors [K], each of length m
      */
-    static double[][] of(List<double[]> deviations, double[] noise, double[] golden) {
+    static double[][] of(List<double[]> deviations, double[] noise, double[] golden, double[] logTimes) {
         int m = noise.length;
         int n = deviations.size();
         RealMatrix contrasts = FamilyModel.contrasts(m);
         RealMatrix reduced = contrasts.multiply(
-                new Array2DRowRealMatrix(FamilyModel.covariance(noise, new double[0][], golden), false))
+                new Array2DRowRealMatrix(FamilyModel.base(noise, golden, logTimes), false))
                 .multiply(contrasts.transpose());
-        RealMatrix root = new CholeskyDecomposition(reduced, 1e-9, 0).getL();
+        RealMatrix root = new CholeskyDecomposition(FamilyModel.symmetrised(reduced)).getL();
         RealMatrix whitening = new LUDecomposition(root, 0).getSolver().solve(contrasts);
         double[] mean = mean(deviations);
         double[][] covariance = new double[m - 1][m - 1];

@@ -7,6 +7,7 @@ import java.util.stream.IntStream;
 import org.laddergate.limits.FaultSignature;
 import org.laddergate.limits.FaultSignature.Shape;
 import org.laddergate.limits.Layer;
+import org.laddergate.limits.SpreadDirection;
 import org.laddergate.measurement.ComparisonBins;
 import org.laddergate.measurement.Recipe;
 import org.laddergate.thermal.AxisymmetricStack;
@@ -24,6 +25,7 @@ import org.laddergate.thermal.FosterNetwork;
  * most voids were put down to the wrong neighbour. Figures in docs/decisions/0002-fault-signatures.md.
  */
 final class FaultLibrary {
+    private static final double SMALL = 0.02;
     private static final double[] GROWTHS = {0.25, 1, 4};
     private static final double[] CENTRE_SHARES = {0.02, 0.035, 0.06, 0.1, 0.16, 0.25, 0.4};
     private static final double[] EDGE_SHARES = {0.04, 0.08, 0.15, 0.25, 0.45};
@@ -68,6 +70,29 @@ final class FaultLibrary {
             }
         }
         return cases.parallelStream().map(this::signature).toList();
+    }
+
+    /** How parts may differ: each layer's resistance and capacitance, the film, the heated share; sigmas still zero. */
+    List<SpreadDirection> spread() {
+        int layers = stack.layerCount();
+        double[] healthy = curve(stack.build(parameters, stack.noChange(), List.of()).network());
+        return IntStream.range(0, stack.parameterCount()).parallel().mapToObj(i -> {
+            double[] moved = parameters.clone();
+            // More resistance is less conductivity; one unit is 100 % in the linear sense.
+            double step = i < layers ? -SMALL : SMALL;
+            moved[i] += step;
+            double[] changed = curve(stack.build(moved, stack.noChange(), List.of()).network());
+            for (int k = 0; k < changed.length; k++) {
+                changed[k] = (changed[k] - healthy[k]) / SMALL;
+            }
+            double[] compared = new double[bins.size()];
+            bins.reduceInto(changed, compared);
+            String name = i < layers ? "resistance of " + stack.layer(i).name()
+                    : i < 2 * layers ? "heat capacity of " + stack.layer(i - layers).name()
+                    : i == 2 * layers ? "film under the last layer" : "heated share";
+            String region = i < layers ? stack.layer(i).region() : "";
+            return new SpreadDirection(name, region, 0, compared);
+        }).toList();
     }
 
     /** A void sits where the material resists most for its thickness: in the joint, not in the metal beside it. */

@@ -3,20 +3,16 @@ package org.laddergate.golden;
 import java.time.Clock;
 import java.util.ArrayList;
 import java.util.Arrays;
-import java.util.Comparator;
 import java.util.List;
-import java.util.Locale;
 import org.apache.commons.statistics.distribution.ChiSquaredDistribution;
-import org.laddergate.golden.GoldenUnit.Condition;
 import org.laddergate.limits.DecisionSettings;
-import org.laddergate.limits.FaultSignature;
-import org.laddergate.limits.FaultSignature.Shape;
 import org.laddergate.limits.GoldenModel;
 import org.laddergate.limits.LimitSet;
 import org.laddergate.limits.LimitState;
 import org.laddergate.limits.Product;
 import org.laddergate.limits.Region;
 import org.laddergate.limits.RegionLimit;
+import org.laddergate.limits.SpreadDirection;
 import org.laddergate.limits.evidence.FamilyModel;
 import org.laddergate.measurement.Recipe;
 
@@ -31,8 +27,11 @@ import org.laddergate.measurement.Recipe;
  * <p>Thread-safe.
  */
 public final class GoldenLearner implements LimitLearning {
-    /** A region is judged only if doubling its resistance would be seen: shift in sigmas of its estimate. */
-    private static final double LEAST_SHIFT = 4.6;
+    /**
+     * Share of the false-reject risk spent on T-squared. It is small because T-squared names nothing: what it alone finds is
+     * atypical rather than faulty.
+     */
+    private static final double IN_FAMILY_SHARE = 0.1;
 
     private final Clock clock;
 
@@ -50,21 +49,21 @@ public final class GoldenLearner implements LimitLearning {
         remarks.addAll(faults.remarks());
         double[] mean = new double[curves.comparison().size()];
         curves.comparison().reduceInto(curves.mean(), mean);
+        double[] logTimes = curves.comparison().logCentres();
         List<double[]> deviations = new ArrayList<>();
         for (int u = 0; u < curves.units(); u++) {
             deviations.add(curves.deviation(u));
         }
-        double[][] factors = FamilyFactors.of(deviations, curves.comparisonNoise(), mean);
-        List<FaultSignature> slight = faults.regions().stream().map(r -> slightest(faults.signatures(), r)).toList();
-        LeaveOneOut leaveOneOut = LeaveOneOut.of(curves, mean, slight);
-        FamilyModel family = FamilyModel.of(curves.comparisonNoise(), factors, mean);
-        List<RegionLimit> limits = regionLimits(product.settings(), faults, slight, leaveOneOut, family,
-                OwnSpread.variances(factors, curves.comparisonNoise(), slight));
-        double inFamilyLimit = inFamilyLimit(leaveOneOut.tSquared(), product.settings().falseRejectRisk() / 2);
+        double[][] factors = FamilyFactors.of(deviations, curves.comparisonNoise(), mean, logTimes);
+        LeaveOneOut leaveOneOut = LeaveOneOut.of(curves, mean);
+        List<SpreadDirection> spread = OwnSpread.learn(directions(faults, curves), factors, curves.comparisonNoise());
+        double[][] base = FamilyModel.base(curves.comparisonNoise(), mean, logTimes);
+        List<RegionLimit> limits = RegionLimits.learn(product.settings(), faults, spread, base, curves);
+        double inFamilyLimit = inFamilyLimit(leaveOneOut.tSquared(), product.settings().falseRejectRisk() * IN_FAMILY_SHARE);
         GoldenModel model = new GoldenModel(curves.bins().firstEdgeSeconds(), curves.bins().lastEdgeSeconds(),
                 curves.bins().perDecade(), curves.mean(), curves.noise(), curves.comparisonNoise(), factors,
-                inFamilyLimit, Double.POSITIVE_INFINITY, faults.networkResistances(), faults.networkTimeConstants(),
-                faults.signatures(), faults.fromLayers(), new double[0], StructureBand.none());
+                leaveOneOut.bend(), inFamilyLimit, Double.POSITIVE_INFINITY, faults.networkResistances(), faults.networkTimeConstants(),
+                faults.signatures(), spread, faults.fromLayers(), new double[0], StructureBand.none());
         GoldenModel complete = StructureBand.addTo(model, recipe, curves, product.settings());
         complete = ShapeLimit.addTo(complete, recipe, judged(limits), product.settings(), curves.units());
         return new LimitSet(product.name(), 0, LimitState.DRAFT, "", clock.instant(), recipe, product.settings(),
@@ -75,38 +74,15 @@ public final class GoldenLearner implements LimitLearning {
         return limits.stream().filter(RegionLimit::assessed).map(RegionLimit::region).toList();
     }
 
-    static FaultSignature slightest(List<FaultSignature> signatures, Region region) {
-        return signatures.stream().filter(s -> s.region().equals(region.name()) && s.shape() == Shape.UNIFORM)
-                .min(Comparator.comparingDouble(FaultSignature::severity)).orElseThrow();
-    }
-
-    private static List<RegionLimit> regionLimits(DecisionSettings settings, FaultModel faults,
-            List<FaultSignature> slight, LeaveOneOut leaveOneOut, FamilyModel family, double[] own) {
-        int regions = slight.size();
-        boolean[] seen = new boolean[regions];
-        int judged = 0;
-        for (int r = 0; r < regions; r++) {
-            FaultSignature s = slight.get(r);
-            double shift = Math.sqrt(FamilyModel.tSquared(family.whiten(s.deviationKelvin()))) / s.severity();
-            seen[r] = shift >= LEAST_SHIFT;
-            judged += seen[r] ? 1 : 0;
-        }
-        double content = 1 - (1 - settings.content()) / Math.max(1, judged);
-        int n = leaveOneOut.tSquared().length;
-        double factor = Tolerance.twoSidedFactor(n, content, settings.confidenceLevel());
-        List<RegionLimit> limits = new ArrayList<>();
-        for (int r = 0; r < regions; r++) {
-            double[] excess = leaveOneOut.excessKelvinPerWatt(r);
-            double mean = Arrays.stream(excess).average().orElseThrow();
-            double sigma = Math.sqrt(Arrays.stream(excess).map(x -> (x - mean) * (x - mean)).sum() / (n - 1));
-            double[] whitened = family.whiten(slight.get(r).deviationKelvin());
-            double total = Math.pow(slight.get(r).addedResistanceKelvinPerWatt(), 2) / FamilyModel.tSquared(whitened);
-            double uncertainty = Math.sqrt(Math.max(0.05 * total, total - own[r]));
-            double centre = faults.goldenResistance(r) + mean;
-            limits.add(new RegionLimit(faults.regions().get(r), seen[r], centre, sigma, uncertainty, factor,
-                    centre - factor * sigma, centre + factor * sigma, "learnt"));
-        }
-        return limits;
+    /** Ways to differ that the product's model knows, and the drift of the heat sink, 1 K over the record. */
+    private static List<SpreadDirection> directions(FaultModel faults, GoldenCurves curves) {
+        List<SpreadDirection> all = new ArrayList<>(faults.spread());
+        double[] times = curves.bins().centresSeconds();
+        double[] line = Arrays.stream(times).map(t -> t / times[times.length - 1]).toArray();
+        double[] drift = new double[curves.comparison().size()];
+        curves.comparison().reduceInto(line, drift);
+        all.add(new SpreadDirection("drift of the heat sink", "", 0, drift));
+        return all;
     }
 
     /**
@@ -123,13 +99,5 @@ public final class GoldenLearner implements LimitLearning {
         // One prediction step: the next value scatters by the mean's own uncertainty as well.
         double quantile = ChiSquaredDistribution.of(freedom).inverseSurvivalProbability(risk);
         return scale * quantile * (1 + 1.0 / n);
-    }
-
-    static String format(String pattern, Object... values) {
-        return String.format(Locale.ROOT, pattern, values);
-    }
-
-    static long count(List<GoldenUnit> units, Condition condition) {
-        return units.stream().filter(u -> u.condition() == condition).count();
     }
 }

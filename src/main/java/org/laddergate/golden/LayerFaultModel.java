@@ -52,7 +52,7 @@ final class LayerFaultModel {
             remarks.add("The layer table does not describe the golden curve well: check thicknesses, areas and materials; "
                     + "named regions may be wrong.");
         }
-        return new FaultModel(List.copyOf(regions.values()), golden, signatures, resistances(healthy.network()),
+        return new FaultModel(List.copyOf(regions.values()), golden, signatures, library.spread(), resistances(healthy.network()),
                 timeConstants(healthy.network()), true, remarks);
     }
 

@@ -3,7 +3,6 @@ package org.laddergate.golden;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.stream.IntStream;
-import org.laddergate.limits.FaultSignature;
 import org.laddergate.limits.evidence.FamilyModel;
 
 /**
@@ -13,23 +12,32 @@ import org.laddergate.limits.evidence.FamilyModel;
  * such figures reject too many good parts.
  */
 final class LeaveOneOut {
-    private final double[] tSquared;
-    private final double[][] excess;
+    private static final double[] BENDS = {0, 0.01, 0.02, 0.04, 0.08, 0.15};
 
-    private LeaveOneOut(double[] tSquared, double[][] excess) {
+    private final double[] tSquared;
+    private final double bend;
+    private final double logDensity;
+
+    private LeaveOneOut(double[] tSquared, double bend, double logDensity) {
         this.tSquared = tSquared;
-        this.excess = excess;
+        this.bend = bend;
+        this.logDensity = logDensity;
     }
 
     /**
      * @param curves    golden curves
      * @param golden    golden mean in comparison bins [K]
-     * @param slight    for each region the uniform signature of smallest severity
      */
-    static LeaveOneOut of(GoldenCurves curves, double[] golden, List<FaultSignature> slight) {
+    static LeaveOneOut of(GoldenCurves curves, double[] golden) {
+        return java.util.Arrays.stream(BENDS).mapToObj(b -> of(curves, golden, b))
+                .max(java.util.Comparator.comparingDouble(l -> l.logDensity)).orElseThrow();
+    }
+
+    private static LeaveOneOut of(GoldenCurves curves, double[] golden, double bend) {
         int n = curves.units();
         double[] tSquared = new double[n];
-        double[][] excess = new double[slight.size()][n];
+        double[] density = new double[n];
+        double[] logTimes = curves.comparison().logCentres();
         IntStream.range(0, n).parallel().forEach(u -> {
             List<double[]> others = new ArrayList<>();
             for (int v = 0; v < n; v++) {
@@ -43,25 +51,21 @@ final class LeaveOneOut {
                 d[i] -= mean[i];
             }
             FamilyModel family = FamilyModel.of(curves.comparisonNoise(),
-                    FamilyFactors.of(others, curves.comparisonNoise(), golden), golden);
+                    FamilyFactors.of(others, curves.comparisonNoise(), golden, logTimes), golden, bend, logTimes);
             double[] z = family.whiten(d);
             tSquared[u] = FamilyModel.tSquared(z);
-            for (int r = 0; r < slight.size(); r++) {
-                FaultSignature s = slight.get(r);
-                excess[r][u] = FamilyModel.amplitude(family.whiten(s.deviationKelvin()), z)
-                        * s.addedResistanceKelvinPerWatt();
-            }
+            density[u] = family.logDensity(z);
         });
-        return new LeaveOneOut(tSquared, excess);
+        return new LeaveOneOut(tSquared, bend, java.util.Arrays.stream(density).sum());
+    }
+
+    /** Bending of the family's factors under which the units left out were most probable [1]. */
+    double bend() {
+        return bend;
     }
 
     /** T-squared of each unit against the others. */
     double[] tSquared() {
         return tSquared;
-    }
-
-    /** Excess resistance of a region over the mean of the others, for each unit [K/W]. */
-    double[] excessKelvinPerWatt(int region) {
-        return excess[region];
     }
 }

@@ -18,37 +18,41 @@ import java.util.List;
  * @param comparisonNoiseKelvin     noise of one curve in each comparison bin, one sigma [K]
  * @param familyFactors             leading factors of the golden covariance, each in comparison bins, scaled by its
  *                                  standard deviation [K]
+ * @param familyBend                relative bending of the factors that predicts golden units best [1]
  * @param inFamilyLimit             limit of T-squared for the stated false-reject risk, from leaving each golden unit
  *                                  out in turn [1]
  * @param shapeLimit                limit of the logarithm of the fault-to-family ratio for the stated risk [1]
  * @param networkResistances        golden Foster network [K/W]
  * @param networkTimeConstants      golden Foster network [s]
  * @param signatures                fault signatures in comparison bins
+ * @param spread                    how healthy parts differ, direction by direction
  * @param fromLayers                whether signatures come from a conduction model of the layer table (true) or from the
  *                                  golden ladder alone (false)
  * @param spectrum                  golden amplitudes on the spectrum's time constants [K/W]
  * @param envelope                  golden band of the structure function
  */
 public record GoldenModel(double firstEdgeSeconds, double lastEdgeSeconds, int binsPerDecade, double[] goldenKelvin,
-        double[] noiseKelvin, double[] comparisonNoiseKelvin, double[][] familyFactors, double inFamilyLimit, double shapeLimit,
-        double[] networkResistances, double[] networkTimeConstants, List<FaultSignature> signatures,
+        double[] noiseKelvin, double[] comparisonNoiseKelvin, double[][] familyFactors, double familyBend,
+        double inFamilyLimit, double shapeLimit,
+        double[] networkResistances, double[] networkTimeConstants, List<FaultSignature> signatures, List<SpreadDirection> spread,
         boolean fromLayers, double[] spectrum, Envelope envelope) {
 
     public GoldenModel {
         signatures = List.copyOf(signatures);
+        spread = List.copyOf(spread);
     }
 
     /** The same model with another limit of the shape test. */
     public GoldenModel withShapeLimit(double limit) {
         return new GoldenModel(firstEdgeSeconds, lastEdgeSeconds, binsPerDecade, goldenKelvin, noiseKelvin,
-                comparisonNoiseKelvin, familyFactors, inFamilyLimit, limit, networkResistances, networkTimeConstants,
-                signatures, fromLayers, spectrum, envelope);
+                comparisonNoiseKelvin, familyFactors, familyBend, inFamilyLimit, limit, networkResistances, networkTimeConstants,
+                signatures, spread, fromLayers, spectrum, envelope);
     }
 
     /** The same model with a golden spectrum and the band of the structure function. */
     public GoldenModel withStructure(double[] goldenSpectrum, Envelope band) {
         return new GoldenModel(firstEdgeSeconds, lastEdgeSeconds, binsPerDecade, goldenKelvin, noiseKelvin,
-                comparisonNoiseKelvin, familyFactors, inFamilyLimit, shapeLimit, networkResistances,
-                networkTimeConstants, signatures, fromLayers, goldenSpectrum, band);
+                comparisonNoiseKelvin, familyFactors, familyBend, inFamilyLimit, shapeLimit, networkResistances,
+                networkTimeConstants, signatures, spread, fromLayers, goldenSpectrum, band);
     }
 }

@@ -51,6 +51,15 @@ public final class ComparisonBins {
         return centresSeconds.clone();
     }
 
+    /** Natural logarithms of the centres [ln s]. */
+    public double[] logCentres() {
+        double[] out = new double[centresSeconds.length];
+        for (int j = 0; j < out.length; j++) {
+            out[j] = Math.log(centresSeconds[j]);
+        }
+        return out;
+    }
+
     /** Index of the first fine bin of a run; {@code firstFine(size())} is the number of fine bins. */
     public int firstFine(int j) {
         return firstFine[j];

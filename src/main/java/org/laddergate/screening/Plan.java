@@ -6,8 +6,10 @@ import java.util.List;
 import org.laddergate.limits.FaultSignature;
 import org.laddergate.limits.GoldenModel;
 import org.laddergate.limits.LimitSet;
+import org.laddergate.limits.RegionEstimator;
 import org.laddergate.limits.RegionLimit;
 import org.laddergate.limits.evidence.EvidenceModel;
+import org.laddergate.limits.evidence.FamilyModel;
 import org.laddergate.measurement.ComparisonBins;
 import org.laddergate.measurement.CurveChecks;
 import org.laddergate.measurement.LogTimeBins;
@@ -32,12 +34,16 @@ public final class Plan {
         this.evidence = EvidenceModel.of(model, limits.recipe(), limits.regionLimits().stream()
                 .filter(RegionLimit::assessed).map(RegionLimit::region).toList(), limits.settings());
         this.regions = new ArrayList<>();
+        double[] golden = new double[comparison.size()];
+        comparison.reduceInto(model.goldenKelvin(), golden);
+        double[][] base = FamilyModel.base(model.comparisonNoiseKelvin(), golden, comparison.logCentres());
         for (RegionLimit limit : limits.regionLimits()) {
             FaultSignature slight = model.signatures().stream()
                     .filter(s -> s.region().equals(limit.region().name())
                             && s.shape() == FaultSignature.Shape.UNIFORM)
                     .min(Comparator.comparingDouble(FaultSignature::severity)).orElseThrow();
-            regions.add(new RegionPlan(limit, slight, evidence.family()));
+            regions.add(new RegionPlan(limit, slight,
+                    RegionEstimator.of(limit.region().name(), slight, model.spread(), base)));
         }
     }
 

@@ -7,18 +7,18 @@ import java.util.Locale;
 import java.util.Optional;
 import org.apache.commons.statistics.distribution.NormalDistribution;
 import org.laddergate.limits.FaultSignature;
+import org.laddergate.limits.RegionEstimator;
 import org.laddergate.limits.RegionLimit;
 import org.laddergate.limits.evidence.EvidenceModel;
 import org.laddergate.limits.evidence.Explanation;
-import org.laddergate.limits.evidence.FamilyModel;
 import org.laddergate.limits.evidence.Subject;
 
 /**
  * Reads the regions' resistances off the whitened deviation in a workspace.
  *
  * <p>For a healthy part every region is read with everything else in family. When a fault is named, its region is read
- * off the signatures that explain the curve, weighted by their evidence, and the other regions are read from what the
- * named fault leaves: otherwise one fault would show in every region.
+ * off the signatures that explain the curve, weighted by their evidence, and the other regions are read with the named
+ * fault allowed for: otherwise one fault would show in every region.
  */
 final class RegionReading {
     private static final NormalDistribution NORMAL = NormalDistribution.of(0, 1);
@@ -35,7 +35,7 @@ final class RegionReading {
 
     /** The reason if a region's resistance is outside its acceptance limits. */
     Optional<Reason> brokenLimit(RegionPlan region, double noiseRatio) {
-        double r = region.resistanceKelvinPerWatt(work.whitened);
+        double r = region.resistanceKelvinPerWatt(work.compared);
         RegionLimit limit = region.limit();
         double guard = guard(limit, noiseRatio);
         boolean high = r > limit.upperKelvinPerWatt() - guard;
@@ -61,31 +61,23 @@ final class RegionReading {
     /** Results of all regions; with a named subject they are read conditional on its fault. */
     List<RegionResult> results(Optional<Integer> named, double noiseRatio) {
         List<RegionResult> out = new ArrayList<>(plan.regions().size());
-        Optional<Explanation> best = named.map(this::bestExplanation);
-        double size = best.map(e -> e.size(work.whitened)).orElse(0.0);
-        best.ifPresent(e -> e.discountInto(size, work.whitened, work.discounted));
+        Optional<double[][]> allowed = named.map(this::allowance);
         for (RegionPlan region : plan.regions()) {
             if (!region.limit().assessed()) {
                 out.add(unread(region));
                 continue;
             }
             int subject = subjectOf(region.name());
-            double resistance;
-            double uncertainty;
-            if (best.isEmpty()) {
-                resistance = region.resistanceKelvinPerWatt(work.whitened);
-                uncertainty = region.limit().uncertaintyKelvinPerWatt();
-            } else if (named.get() == subject) {
-                double[] excess = namedExcess(subject);
+            double resistance = region.resistanceKelvinPerWatt(work.compared);
+            double uncertainty = region.limit().uncertaintyKelvinPerWatt();
+            if (allowed.isPresent() && named.get() == subject) {
+                double[] excess = namedExcess(region, subject);
                 resistance = region.limit().goldenMeanKelvinPerWatt() + excess[0];
-                uncertainty = Math.hypot(region.limit().uncertaintyKelvinPerWatt(), excess[1]);
-            } else {
-                double[] shape = region.whitenedPerKelvinPerWatt();
-                best.get().discountInto(size, shape, work.discountedShape);
-                double information = dot(shape, work.discountedShape);
-                resistance = region.limit().goldenMeanKelvinPerWatt() + dot(shape, work.discounted) / information;
-                uncertainty = Math.sqrt(Math.max(1 / information - region.ownVariance(),
-                        region.limit().uncertaintyKelvinPerWatt() * region.limit().uncertaintyKelvinPerWatt()));
+                uncertainty = Math.hypot(uncertainty, excess[1]);
+            } else if (allowed.isPresent()) {
+                RegionEstimator lenient = region.estimator().allowing(allowed.get(), region.slight());
+                resistance = region.limit().goldenMeanKelvinPerWatt() + lenient.excessKelvinPerWatt(work.compared);
+                uncertainty = lenient.uncertaintyKelvinPerWatt();
             }
             out.add(result(region, resistance, uncertainty * Math.max(1, noiseRatio), work.posterior[subject]));
         }
@@ -93,57 +85,50 @@ final class RegionReading {
     }
 
     /** Mean and standard deviation of the named region's excess resistance over its explanations [K/W]. */
-    private double[] namedExcess(int subject) {
+    private double[] namedExcess(RegionPlan region, int subject) {
         EvidenceModel evidence = plan.evidence();
         double sum = 0;
         double mean = 0;
         double square = 0;
         for (int e = evidence.firstExplanation(subject); e < evidence.firstExplanation(subject + 1); e++) {
-            Explanation explanation = evidence.explanation(e);
             double weight = Math.exp(work.explanationLog[e] - work.subjectLog[subject]);
-            if (weight > 1e-6 && explanation.signature().isPresent()) {
-                FaultSignature s = explanation.signature().get();
-                double added = explanation.size(work.whitened) * s.addedResistanceKelvinPerWatt();
-                double own = s.addedResistanceKelvinPerWatt() / explanation.signalToNoise();
+            if (weight > 1e-4) {
+                FaultSignature s = evidence.explanation(e).signature().orElseThrow();
+                double[] size = region.estimator().size(s.deviationKelvin(), work.compared);
+                double added = size[0] * s.addedResistanceKelvinPerWatt();
                 sum += weight;
                 mean += weight * added;
-                square += weight * (added * added + own * own);
+                square += weight * added * added;
             }
         }
         mean /= sum;
         return new double[] {mean, Math.sqrt(Math.max(0, square / sum - mean * mean))};
     }
 
+    /** What the named subject's best explanation may have done to the curve, as a covariance [K^2]. */
+    private double[][] allowance(int named) {
+        Explanation best = bestExplanation(named);
+        return best.allowance(best.size(work.whitened));
+    }
+
     /** Regions that still stand out when the named fault is allowed for, largest first. */
     List<String> otherSuspects(int named) {
-        Explanation best = bestExplanation(named);
-        double size = best.size(work.whitened);
-        best.discountInto(size, work.whitened, work.discounted);
+        double[][] allowed = allowance(named);
         record Suspect(String region, double sigmas) {}
         List<Suspect> suspects = new ArrayList<>();
         for (RegionPlan region : plan.regions()) {
             if (region.limit().assessed() && subjectOf(region.name()) != named) {
-                double sigmas = standsOut(subjectOf(region.name()), best, size);
-                if (sigmas > SECOND_FAULT_SIGMAS) {
-                    suspects.add(new Suspect(region.name(), sigmas));
+                RegionEstimator lenient = region.estimator().allowing(allowed, region.slight());
+                double excess = lenient.excessKelvinPerWatt(work.compared);
+                double spread = Math.hypot(lenient.uncertaintyKelvinPerWatt(),
+                        region.limit().goldenSigmaKelvinPerWatt());
+                if (excess > SECOND_FAULT_SIGMAS * spread) {
+                    suspects.add(new Suspect(region.name(), excess / spread));
                 }
             }
         }
         suspects.sort(Comparator.comparingDouble(Suspect::sigmas).reversed());
         return suspects.stream().map(Suspect::region).toList();
-    }
-
-    /** Largest score, in sigmas, of any signature of a subject in what the best explanation leaves. */
-    private double standsOut(int subject, Explanation best, double size) {
-        EvidenceModel evidence = plan.evidence();
-        double largest = 0;
-        for (int e = evidence.firstExplanation(subject); e < evidence.firstExplanation(subject + 1); e++) {
-            double[] shape = evidence.explanation(e).whitenedShape();
-            best.discountInto(size, shape, work.discountedShape);
-            double information = dot(shape, work.discountedShape);
-            largest = Math.max(largest, dot(shape, work.discounted) / Math.sqrt(information));
-        }
-        return largest;
     }
 
     List<RegionResult> unread() {
@@ -181,13 +166,5 @@ final class RegionReading {
             }
         }
         throw new IllegalStateException("no subject " + region);
-    }
-
-    private static double dot(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
-        }
-        return sum;
     }
 }

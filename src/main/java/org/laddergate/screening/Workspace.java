@@ -13,8 +13,6 @@ final class Workspace {
     final double[] deviation;
     final double[] compared;
     final double[] whitened;
-    final double[] discounted;
-    final double[] discountedShape;
     final double[] scratch;
     final double[] explanationLog;
     final double[] subjectLog;
@@ -30,8 +28,6 @@ final class Workspace {
         deviation = new double[n];
         compared = new double[comparison.size()];
         whitened = new double[freedom];
-        discounted = new double[freedom];
-        discountedShape = new double[freedom];
         scratch = new double[Math.max(freedom, n)];
         explanationLog = new double[evidence.explanationCount()];
         subjectLog = new double[evidence.subjects().size()];

@@ -54,7 +54,8 @@ public final class EvidenceModel {
         ComparisonBins bins = ComparisonBins.of(fine);
         double[] golden = new double[bins.size()];
         bins.reduceInto(model.goldenKelvin(), golden);
-        return FamilyModel.of(model.comparisonNoiseKelvin(), model.familyFactors(), golden);
+        return FamilyModel.of(model.comparisonNoiseKelvin(), model.familyFactors(), golden, model.familyBend(),
+                bins.logCentres());
     }
 
     public FamilyModel family() {

@@ -28,10 +28,12 @@ public final class Explanation {
 
     private final Optional<FaultSignature> signature;
     private final double logWeight;
+    private final double[] shape;
+    private final double spread;
+    private final double[][] bending;
     private final double[] whitenedShape;
     private final double shapeSquared;
     private final double[][] directions;
-    private final double[] variances;
     private final double[] along;
     private final double[] sizes;
     private final double[][] shrink;
@@ -40,11 +42,14 @@ public final class Explanation {
     private Explanation(Builder b, FamilyModel family) {
         this.signature = b.signature;
         this.logWeight = Math.log(b.weight);
+        this.shape = b.shape;
+        this.spread = b.spread;
+        this.bending = b.bending();
         this.whitenedShape = family.whiten(b.shape);
         this.shapeSquared = FamilyModel.tSquared(whitenedShape);
         this.sizes = b.sizes.clone();
         EigenDecomposition eigen = new EigenDecomposition(
-                new Array2DRowRealMatrix(symmetric(family.whitenCovariance(b.bending()), b.spread, whitenedShape), false));
+                new Array2DRowRealMatrix(symmetric(family.whitenCovariance(bending), b.spread, whitenedShape), false));
         double[] values = eigen.getRealEigenvalues();
         int rank = 0;
         while (rank < values.length && values[rank] > SMALLEST_VARIANCE) {
@@ -52,7 +57,6 @@ public final class Explanation {
         }
         directions = new double[rank][];
         along = new double[rank];
-        variances = java.util.Arrays.copyOf(values, rank);
         for (int i = 0; i < rank; i++) {
             directions[i] = eigen.getEigenvector(i).toArray();
             along[i] = dot(directions[i], whitenedShape);
@@ -129,31 +133,18 @@ public final class Explanation {
     }
 
     /**
-     * Takes from a whitened vector what this explanation at a given size could account for: (I + K)^-1 v.
-     *
-     * @param size  size a, in units of the shape
-     * @param v     whitened vector, not modified
-     * @param out   same length, overwritten, must not alias {@code v}
+     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + b^2 |s s'| o G) [K^2], or
+     * the free covariance.
      */
-    public void discountInto(double size, double[] v, double[] out) {
-        System.arraycopy(v, 0, out, 0, v.length);
-        for (int i = 0; i < directions.length; i++) {
-            double q = size * size * variances[i];
-            double c = q / (1 + q) * dot(directions[i], v);
-            for (int j = 0; j < out.length; j++) {
-                out[j] -= c * directions[i][j];
+    public double[][] allowance(double size) {
+        int m = shape.length;
+        double[][] out = new double[m][m];
+        for (int i = 0; i < m; i++) {
+            for (int j = 0; j < m; j++) {
+                out[i][j] = size * size * (bending[i][j] + (1 + spread * spread) * shape[i] * shape[j]);
             }
         }
-    }
-
-    /** Whitened signature at size 1; must not be modified. */
-    public double[] whitenedShape() {
-        return whitenedShape;
-    }
-
-    /** Length of the whitened signature: its size in sigmas at size 1, the matched filter's signal-to-noise ratio [1]. */
-    public double signalToNoise() {
-        return Math.sqrt(shapeSquared);
+        return out;
     }
 
     /** Generalised least squares size of the signature in a deviation, in units of the signature; 1 for a free explanation [1]. */

@@ -12,6 +12,7 @@ import org.laddergate.limits.LimitSet;
 import org.laddergate.limits.LimitState;
 import org.laddergate.limits.Region;
 import org.laddergate.limits.RegionLimit;
+import org.laddergate.limits.SpreadDirection;
 
 /** The content of a limit set as text; its state is not part of it. */
 final class LimitText {
@@ -42,7 +43,7 @@ final class LimitText {
     private static void model(SectionText.Writer w, GoldenModel m) {
         w.section("golden family").value("first_edge_s", m.firstEdgeSeconds()).value("last_edge_s", m.lastEdgeSeconds())
                 .value("bins_per_decade", m.binsPerDecade()).value("in_family_limit", m.inFamilyLimit())
-                .value("shape_limit", m.shapeLimit()).value("from_layers", m.fromLayers());
+                .value("shape_limit", m.shapeLimit()).value("family_bend", m.familyBend()).value("from_layers", m.fromLayers());
         w.section("envelope").row("capacitance_J_per_K", "lower_K_per_W", "upper_K_per_W");
         for (int i = 0; i < m.envelope().capacitancesJoulesPerKelvin().length; i++) {
             w.row(m.envelope().capacitancesJoulesPerKelvin()[i], m.envelope().lowerKelvinPerWatt()[i],
@@ -68,6 +69,22 @@ final class LimitText {
             w.row(s.region(), s.shape().word(), s.severity(), s.addedResistanceKelvinPerWatt(),
                     joined(s.deviationKelvin()));
         }
+        spread(w, m.spread());
+    }
+
+    private static void spread(SectionText.Writer w, List<SpreadDirection> spread) {
+        w.section("family spread").comment("how healthy parts differ: deviation for one unit in comparison bins [K]")
+                .row("name", "region", "sigma", "deviation_K");
+        spread.forEach(d -> w.row(d.name(), d.region(), d.sigma(), joined(d.deviationKelvin())));
+    }
+
+    private static List<SpreadDirection> spread(SectionText.Section s) {
+        List<SpreadDirection> out = new ArrayList<>();
+        for (int i = 0; i < s.rowCount(); i++) {
+            out.add(new SpreadDirection(s.cell(i, "name"), s.cell(i, "region"), s.number(i, "sigma"),
+                    split(s.cell(i, "deviation_K"))));
+        }
+        return out;
     }
 
     private static void vectors(SectionText.Writer w, String name, double[][] vectors) {
@@ -124,9 +141,10 @@ final class LimitText {
         }
         return new GoldenModel(family.number("first_edge_s"), family.number("last_edge_s"),
                 (int) family.number("bins_per_decade"), curve.column("golden_K"), curve.column("noise_K"),
-                vectors(s, "comparison noise")[0], vectors(s, "family factors"), family.number("in_family_limit"),
+                vectors(s, "comparison noise")[0], vectors(s, "family factors"), family.number("family_bend"),
+                family.number("in_family_limit"),
                 family.number("shape_limit"), network.column("resistance_K_per_W"), network.column("time_constant_s"),
-                signatures, Boolean.parseBoolean(family.text("from_layers")),
+                signatures, spread(ProductText.section(s, "family spread")), Boolean.parseBoolean(family.text("from_layers")),
                 ProductText.section(s, "golden spectrum").column("amplitude_K_per_W"),
                 new Envelope(envelope.column("capacitance_J_per_K"), envelope.column("lower_K_per_W"),
                         envelope.column("upper_K_per_W")));
