@@ -119,7 +119,7 @@ final class FaultLibrary {
 
     private double[] curve(FosterNetwork network) {
         double[] out = new double[fineTimes.length];
-        Responses.coolingInto(network, recipe.heatingPowerWatts(), recipe.pulseSeconds(), fineTimes, out);
+        network.coolingInto(recipe.heatingPowerWatts(), recipe.pulseSeconds(), fineTimes, out);
         return out;
     }
 

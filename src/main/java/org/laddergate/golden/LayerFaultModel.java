@@ -10,7 +10,6 @@ import org.laddergate.limits.Layer;
 import org.laddergate.limits.Product;
 import org.laddergate.limits.Region;
 import org.laddergate.thermal.AxisymmetricStack;
-import org.laddergate.thermal.FosterNetwork;
 
 /** The heat path of a product with a layer table: a conduction model calibrated to the golden curve. */
 final class LayerFaultModel {
@@ -52,8 +51,8 @@ final class LayerFaultModel {
             remarks.add("The layer table does not describe the golden curve well: check thicknesses, areas and materials; "
                     + "named regions may be wrong.");
         }
-        return new FaultModel(List.copyOf(regions.values()), golden, signatures, library.spread(), resistances(healthy.network()),
-                timeConstants(healthy.network()), true, remarks);
+        return new FaultModel(List.copyOf(regions.values()), golden, signatures, library.spread(), healthy.network().resistancesKelvinPerWatt(),
+                healthy.network().timeConstantsSeconds(), true, remarks);
     }
 
     /** Capacitance intervals of the regions by the 45 degree spreading rule (common practice, no source). */
@@ -78,21 +77,5 @@ final class LayerFaultModel {
             }
         }
         return regions;
-    }
-
-    static double[] resistances(FosterNetwork network) {
-        double[] out = new double[network.size()];
-        for (int i = 0; i < out.length; i++) {
-            out[i] = network.resistanceKelvinPerWatt(i);
-        }
-        return out;
-    }
-
-    static double[] timeConstants(FosterNetwork network) {
-        double[] out = new double[network.size()];
-        for (int i = 0; i < out.length; i++) {
-            out[i] = network.timeConstantSeconds(i);
-        }
-        return out;
     }
 }

@@ -116,7 +116,7 @@ final class StackCalibration {
     private double[] residual(double[] p) {
         FosterNetwork network = stack.build(p, stack.noChange(), List.of()).network();
         double[] model = new double[timesSeconds.length];
-        Responses.coolingInto(network, recipe.heatingPowerWatts(), recipe.pulseSeconds(), timesSeconds, model);
+        network.coolingInto(recipe.heatingPowerWatts(), recipe.pulseSeconds(), timesSeconds, model);
         double[] r = new double[model.length];
         for (int i = 0; i < r.length; i++) {
             r[i] = golden[i] - model[i];

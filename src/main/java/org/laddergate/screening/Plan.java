@@ -8,11 +8,13 @@ import org.laddergate.limits.GoldenModel;
 import org.laddergate.limits.LimitSet;
 import org.laddergate.limits.RegionEstimator;
 import org.laddergate.limits.RegionLimit;
+import org.laddergate.limits.StructurePlans;
 import org.laddergate.limits.evidence.EvidenceModel;
 import org.laddergate.limits.evidence.FamilyModel;
 import org.laddergate.measurement.ComparisonBins;
 import org.laddergate.measurement.CurveChecks;
 import org.laddergate.measurement.LogTimeBins;
+import org.laddergate.thermal.SpectrumPlan;
 
 /**
  * Everything that judging needs and that depends only on the limit set, worked out once per revision. Immutable.
@@ -24,6 +26,7 @@ public final class Plan {
     private final CurveChecks checks;
     private final EvidenceModel evidence;
     private final List<RegionPlan> regions;
+    private final SpectrumPlan spectrum;
 
     private Plan(LimitSet limits) {
         GoldenModel model = limits.model();
@@ -33,6 +36,7 @@ public final class Plan {
         this.checks = new CurveChecks(model.goldenKelvin(), model.noiseKelvin(), limits.recipe().maximumNoiseKelvin());
         this.evidence = EvidenceModel.of(model, limits.recipe(), limits.regionLimits().stream()
                 .filter(RegionLimit::assessed).map(RegionLimit::region).toList(), limits.settings());
+        this.spectrum = StructurePlans.of(model, limits.recipe());
         this.regions = new ArrayList<>();
         double[] golden = new double[comparison.size()];
         comparison.reduceInto(model.goldenKelvin(), golden);
@@ -76,6 +80,6 @@ public final class Plan {
     }
 
     Workspace newWorkspace() {
-        return new Workspace(bins, comparison, evidence);
+        return new Workspace(bins, comparison, evidence, spectrum);
     }
 }

@@ -3,6 +3,8 @@ package org.laddergate.screening;
 import org.laddergate.limits.evidence.EvidenceModel;
 import org.laddergate.measurement.ComparisonBins;
 import org.laddergate.measurement.LogTimeBins;
+import org.laddergate.thermal.SpectrumPlan;
+import org.laddergate.thermal.StructureSolver;
 
 /** Scratch arrays for judging one measurement at a time; one per thread and plan. Not thread-safe. */
 final class Workspace {
@@ -17,8 +19,9 @@ final class Workspace {
     final double[] explanationLog;
     final double[] subjectLog;
     final double[] posterior;
+    final StructureSolver structure;
 
-    Workspace(LogTimeBins bins, ComparisonBins comparison, EvidenceModel evidence) {
+    Workspace(LogTimeBins bins, ComparisonBins comparison, EvidenceModel evidence, SpectrumPlan spectrum) {
         int n = bins.size();
         int freedom = evidence.family().freedom();
         binned = new double[n];
@@ -32,5 +35,6 @@ final class Workspace {
         explanationLog = new double[evidence.explanationCount()];
         subjectLog = new double[evidence.subjects().size()];
         posterior = new double[evidence.subjects().size()];
+        structure = new StructureSolver(spectrum);
     }
 }
