@@ -12,6 +12,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.stream.Collectors;
+import org.eclipse.jetty.server.handler.GracefulHandler;
 import org.eclipse.jetty.util.thread.QueuedThreadPool;
 import org.laddergate.measurement.CurveRules;
 import org.slf4j.Logger;
@@ -100,6 +101,8 @@ public final class HttpService implements AutoCloseable {
         config.jetty.modifyServer(server -> {
             server.setStopTimeout(settings.drain().toMillis());
             server.setErrorHandler(new ServerErrors());
+            // Without it the server would cut off running requests when it stops.
+            server.insertHandler(new GracefulHandler());
         });
         config.http.maxRequestSize = settings.maximumBodyBytes();
         config.router.javaLangErrorHandler(HttpService::answerError);
