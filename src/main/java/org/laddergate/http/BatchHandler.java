@@ -7,7 +7,7 @@ import java.io.InputStream;
 import java.util.ArrayDeque;
 import java.util.Deque;
 import java.util.concurrent.CompletableFuture;
-import org.laddergate.measurement.Submission;
+import java.util.concurrent.CompletionException;
 
 /**
  * Many transients in one request, one JSON object a line; one line of answer for every line, in the same order, either a
@@ -36,12 +36,21 @@ record BatchHandler(Bodies bodies, Judging judging) {
         }
     }
 
+    /**
+     * A line on its way.
+     *
+     * @param number        from 1
+     * @param measurementId as far as it could be read
+     * @param judged        completes when the verdict is on disk
+     */
+    private record Pending(long number, String measurementId, CompletableFuture<Judging.Judged> judged) {}
+
     /** One batch. */
     private final class Run {
         private final String requestId;
         private final LineReader lines;
         private final ServletOutputStream out;
-        private final Deque<CompletableFuture<byte[]>> waiting = new ArrayDeque<>();
+        private final Deque<Pending> waiting = new ArrayDeque<>();
         private boolean ended;
         private long line;
 
@@ -54,14 +63,12 @@ record BatchHandler(Bodies bodies, Judging judging) {
         void all() throws IOException {
             while (!ended) {
                 line++;
-                CompletableFuture<byte[]> answer = next();
-                if (answer != null) {
-                    waiting.add(answer);
-                }
+                next();
                 // Nothing more to read at the moment: the client may be waiting for its answers.
                 boolean idle = ended || lines.mustWait();
-                while (!waiting.isEmpty() && (idle || waiting.size() >= WINDOW || waiting.peek().isDone())) {
-                    out.write(waiting.remove().join());
+                while (!waiting.isEmpty()
+                        && (idle || waiting.size() >= WINDOW || waiting.peek().judged().isDone())) {
+                    out.write(answer(waiting.remove()));
                     out.write('\n');
                 }
                 if (idle) {
@@ -70,43 +77,49 @@ record BatchHandler(Bodies bodies, Judging judging) {
             }
         }
 
-        /** The answer to the next line; null if the line is blank. */
-        private CompletableFuture<byte[]> next() {
+        /** Reads a line and sends it on its way, unless it is blank. */
+        private void next() {
             try {
                 byte[] text = lines.read();
                 ended = lines.isAtEnd();
                 if (lines.wasTooLong()) {
-                    return failed(bodies.tooLarge(), line, "");
+                    waiting.add(refused(bodies.tooLarge(), ""));
+                } else if (!isBlank(text)) {
+                    waiting.add(judge(text));
                 }
-                return isBlank(text) ? null : answer(text, line);
             } catch (IOException e) {
                 ended = true;
-                return failed(Bodies.cutOff(e), line, "");
+                waiting.add(refused(Bodies.cutOff(e), ""));
             }
         }
 
-        private CompletableFuture<byte[]> answer(byte[] text, long number) {
-            Submission[] seen = new Submission[1];
+        private Pending judge(byte[] text) {
+            String[] id = {""};
             try {
-                return judging.judge(() -> {
+                CompletableFuture<Judging.Judged> judged = judging.judge(() -> {
                     SubmissionJson.Parsed parsed = SubmissionJson.parse(text, judging.maximumSamples());
-                    seen[0] = parsed.submission();
+                    id[0] = parsed.submission().measurementId();
                     return parsed;
-                }).handle((judged, failure) -> failure == null
-                        ? VerdictJson.bytes(judged.verdict(), judged.warnings(), VerdictJson.Extra.NOTHING)
-                        : problem(failure, number, seen[0].measurementId()));
+                });
+                return new Pending(line, id[0], judged);
             } catch (RuntimeException e) {
-                return failed(e, number, seen[0] == null ? "" : seen[0].measurementId());
+                return refused(e, id[0]);
             }
         }
 
-        private CompletableFuture<byte[]> failed(RuntimeException e, long number, String measurementId) {
-            return CompletableFuture.completedFuture(problem(e, number, measurementId));
+        private Pending refused(RuntimeException e, String measurementId) {
+            return new Pending(line, measurementId, CompletableFuture.failedFuture(e));
         }
 
-        private byte[] problem(Throwable failure, long number, String measurementId) {
-            String id = measurementId.length() <= 128 ? measurementId : "";
-            return Problems.of(failure, requestId).json(requestId, number, id);
+        /** Waits for the disk here, so that the thread that writes it does nothing else. */
+        private byte[] answer(Pending pending) {
+            try {
+                Judging.Judged judged = pending.judged().join();
+                return VerdictJson.bytes(judged.verdict(), judged.warnings(), VerdictJson.Extra.NOTHING);
+            } catch (CompletionException e) {
+                String id = pending.measurementId();
+                return Problems.of(e, requestId).json(requestId, pending.number(), id.length() <= 128 ? id : "");
+            }
         }
 
         private boolean isBlank(byte[] text) {

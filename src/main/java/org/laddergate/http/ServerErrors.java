@@ -16,6 +16,9 @@ final class ServerErrors extends ErrorHandler {
         response.setStatus(code.status());
         response.getHeaders().put(HttpHeader.CONTENT_TYPE, Problem.CONTENT_TYPE);
         response.getHeaders().put(HttpHeader.CONTENT_LENGTH, body.length);
+        if (code.status() == 503) {
+            response.getHeaders().put(HttpHeader.RETRY_AFTER, "2");
+        }
         response.write(true, ByteBuffer.wrap(body), callback);
         return true;
     }
