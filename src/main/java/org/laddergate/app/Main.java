@@ -1,6 +1,10 @@
 package org.laddergate.app;
 
+/** Main program. */
 public final class Main {
     private Main() {}
-    public static void main(String[] args) { System.out.println("laddergate"); }
+
+    public static void main(String[] args) {
+        System.exit(Commands.line(Wiring::new, System.getenv()).execute(args));
+    }
 }

@@ -1,5 +1,6 @@
 package org.laddergate.measurement;
 
+import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 
@@ -29,6 +30,9 @@ public record Submission(String measurementId, String product, String serial, St
         Optional<TemperatureSensor> sensor, String condition, String faultRegion, double[] timesSeconds,
         double[] values, String valueField, int firstLine) {
 
+    /** Names of the text fields on the wire and in file headers. */
+    public static final List<String> TEXT_FIELDS = List.of("measurementId", "product", "serial", "lot", "station",
+            "measuredAt", "curve", "condition", "faultRegion");
     public static final String TIME_FIELD = "timeSeconds";
     public static final String TEMPERATURE_FIELD = "temperatureCelsius";
     public static final String VOLTAGE_FIELD = "voltageVolts";
@@ -38,6 +42,32 @@ public record Submission(String measurementId, String product, String serial, St
     /** Whether the values are sensor voltages. */
     public boolean hasVoltages() {
         return valueField.equals(VOLTAGE_FIELD);
+    }
+
+    /** A text field by its name on the wire; empty if it was not given or there is no such field. */
+    public String text(String field) {
+        return switch (field) {
+            case "measurementId" -> measurementId;
+            case "product" -> product;
+            case "serial" -> serial;
+            case "lot" -> lot;
+            case "station" -> station;
+            case "measuredAt" -> measuredAt;
+            case "curve" -> curve;
+            case "condition" -> condition;
+            case "faultRegion" -> faultRegion;
+            default -> "";
+        };
+    }
+
+    /** A builder that starts from this submission; shares the arrays. */
+    public Builder toBuilder() {
+        Builder b = new Builder();
+        TEXT_FIELDS.forEach(field -> b.text(field, text(field)));
+        heatingPowerWatts.ifPresent(watts -> b.number("heatingPowerWatts", watts));
+        heatingSeconds.ifPresent(seconds -> b.number("heatingSeconds", seconds));
+        sensor.ifPresent(b::sensor);
+        return b.timesSeconds(timesSeconds).values(valueField, values).firstLine(firstLine);
     }
 
     /** Collects the fields in whatever order they arrive; for one thread. */
