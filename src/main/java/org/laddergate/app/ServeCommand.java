@@ -19,7 +19,8 @@ import picocli.CommandLine.Spec;
 
 /** Runs the HTTP service until the process is asked to end. */
 @Command(name = "serve", mixinStandardHelpOptions = true, sortOptions = false,
-        description = "Run the HTTP service. Every setting can also be given by the environment variable named with it.")
+        description = {"Run the HTTP service.",
+            "Every setting can also be given by the environment variable named with it."})
 final class ServeCommand implements Callable<Integer> {
     private static final Logger LOG = LoggerFactory.getLogger(ServeCommand.class);
 

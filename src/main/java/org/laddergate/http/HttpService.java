@@ -101,7 +101,7 @@ public final class HttpService implements AutoCloseable {
         config.jetty.modifyServer(server -> {
             server.setStopTimeout(settings.drain().toMillis());
             server.setErrorHandler(new ServerErrors());
-            // Without it the server would cut off running requests when it stops.
+            // Turns new requests on open connections away while running ones finish.
             server.insertHandler(new GracefulHandler());
         });
         config.http.maxRequestSize = settings.maximumBodyBytes();
