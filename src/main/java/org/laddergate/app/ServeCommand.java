@@ -40,12 +40,21 @@ final class ServeCommand implements Callable<Integer> {
         warnOfUnknownVariables();
         Tokens tokens = tokens(settings);
         Wiring wired = wiring.apply(settings);
-        HttpService service = HttpService.start(settings.http(), wired.services(), tokens);
+        HttpService service = start(settings, wired, tokens);
         LOG.info("listening on {}:{}", settings.http().host(), service.port());
         CountDownLatch stopped = new CountDownLatch(1);
         Runtime.getRuntime().addShutdownHook(new Thread(() -> stop(service, wired, stopped), "shutdown"));
         stopped.await();
         return 0;
+    }
+
+    private static HttpService start(Settings settings, Wiring wired, Tokens tokens) {
+        try {
+            return HttpService.start(settings.http(), wired.services(), tokens);
+        } catch (RuntimeException e) {
+            wired.close();
+            throw e;
+        }
     }
 
     /** First no more requests, then no more stores. */
