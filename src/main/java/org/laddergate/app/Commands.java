@@ -1,5 +1,6 @@
 package org.laddergate.app;
 
+import java.nio.file.NoSuchFileException;
 import java.util.Map;
 import java.util.function.Function;
 import org.laddergate.limits.LimitNotFoundException;
@@ -45,8 +46,8 @@ final class Commands {
         if (e instanceof InvalidInputException invalid) {
             invalid.faults().forEach(fault -> line.getErr().println(fault.pointer() + ": " + fault.detail()));
         } else if (e instanceof LimitNotFoundException || e instanceof IllegalArgumentException
-                || e instanceof IllegalStateException || e instanceof java.nio.file.NoSuchFileException) {
-            line.getErr().println(e instanceof java.nio.file.NoSuchFileException ? "no such file: " + e.getMessage()
+                || e instanceof IllegalStateException || e instanceof NoSuchFileException) {
+            line.getErr().println(e instanceof NoSuchFileException ? "no such file: " + e.getMessage()
                     : e.getMessage());
             LOG.debug("refused", e);
         } else {

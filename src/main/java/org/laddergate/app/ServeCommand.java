@@ -19,7 +19,8 @@ import picocli.CommandLine.Spec;
 
 /** Runs the HTTP service until the process is asked to end. */
 @Command(name = "serve", mixinStandardHelpOptions = true, sortOptions = false,
-        description = "Run the HTTP service. Every setting can also be given by the environment variable named with it.")
+        description = {"Run the HTTP service.",
+            "Every setting can also be given by the environment variable named with it."})
 final class ServeCommand implements Callable<Integer> {
     private static final Logger LOG = LoggerFactory.getLogger(ServeCommand.class);
 
@@ -39,12 +40,21 @@ final class ServeCommand implements Callable<Integer> {
         warnOfUnknownVariables();
         Tokens tokens = tokens(settings);
         Wiring wired = wiring.apply(settings);
-        HttpService service = HttpService.start(settings.http(), wired.services(), tokens);
+        HttpService service = start(settings, wired, tokens);
         LOG.info("listening on {}:{}", settings.http().host(), service.port());
         CountDownLatch stopped = new CountDownLatch(1);
         Runtime.getRuntime().addShutdownHook(new Thread(() -> stop(service, wired, stopped), "shutdown"));
         stopped.await();
         return 0;
+    }
+
+    private static HttpService start(Settings settings, Wiring wired, Tokens tokens) {
+        try {
+            return HttpService.start(settings.http(), wired.services(), tokens);
+        } catch (RuntimeException e) {
+            wired.close();
+            throw e;
+        }
     }
 
     /** First no more requests, then no more stores. */

@@ -19,8 +19,8 @@ record AccessCheck(Tokens tokens) {
         if (!tokens.inUse() || access == Access.OPEN) {
             return;
         }
-        Tokens.Caller caller = presented(ctx).flatMap(tokens::caller).orElseThrow(() ->
-                refusal(ProblemCode.NOT_AUTHENTICATED, "a valid bearer token is needed", "Bearer realm=\"laddergate\""));
+        Tokens.Caller caller = presented(ctx).flatMap(tokens::caller).orElseThrow(() -> refusal(
+                ProblemCode.NOT_AUTHENTICATED, "a valid bearer token is needed", "Bearer realm=\"laddergate\""));
         if (!access.isOpenTo(caller.role())) {
             throw refusal(ProblemCode.NOT_ALLOWED, "a token with the role " + caller.role().word()
                     + " may not do this", "Bearer realm=\"laddergate\", error=\"insufficient_scope\"");

@@ -10,9 +10,9 @@ import java.util.concurrent.CompletableFuture;
 import java.util.concurrent.CompletionException;
 
 /**
- * Many transients in one request, one JSON object a line; one line of answer for every line, in the same order, either a
- * verdict or a problem. A bad line spoils no other. Answers are written while lines still come in, so a client that sends
- * much should read while it writes.
+ * Many transients in one request, one JSON object a line; one line of answer for every line, in the same order, either
+ * a verdict or a problem. A bad line spoils no other. Answers are written while lines still come in, so a client that
+ * sends much should read while it writes.
  *
  * @param bodies    size limits; one line may be as large as one body
  * @param judging   what happens to a line

@@ -2,6 +2,7 @@ package org.laddergate.http;
 
 import io.javalin.http.Context;
 import java.io.ByteArrayInputStream;
+import java.io.FilterInputStream;
 import java.io.IOException;
 import java.io.InputStream;
 import java.util.List;
@@ -136,7 +137,7 @@ record Bodies(int maximumBytes) {
     }
 
     /** Ends with an exception where a batch has gone too far. */
-    private static final class CappedStream extends java.io.FilterInputStream {
+    private static final class CappedStream extends FilterInputStream {
         private long left;
 
         CappedStream(InputStream in, long limit) {

@@ -11,9 +11,9 @@ import org.laddergate.measurement.Submission;
 import org.laddergate.measurement.TemperatureSensor;
 
 /**
- * SHA-256 over everything a tester said about a measurement: white space, field order, compression and the choice between
- * JSON and CSV do not matter, every bit of every number does. Nothing that the service filled in goes into it, so that a
- * request without a time, sent again, is the same request.
+ * SHA-256 over everything a tester said about a measurement: white space, field order, compression and the choice
+ * between JSON and CSV do not matter, every bit of every number does. Nothing that the service filled in goes into it,
+ * so that a request without a time, sent again, is the same request.
  *
  * <p>The form of the hashed bytes is part of what is stored and never changes; a new form gets a new first line.
  */

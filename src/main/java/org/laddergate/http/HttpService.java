@@ -4,6 +4,7 @@ import io.javalin.Javalin;
 import io.javalin.config.JavalinConfig;
 import io.javalin.http.Context;
 import io.javalin.http.NotFoundResponse;
+import io.javalin.util.JavalinBindException;
 import jakarta.servlet.http.HttpServletResponse;
 import java.io.IOException;
 import java.time.Duration;
@@ -43,10 +44,19 @@ public final class HttpService implements AutoCloseable {
         this.javalin = Javalin.create(this::configure);
     }
 
-    /** Starts listening; returns when it does. */
+    /**
+     * Starts listening; returns when it does.
+     *
+     * @throws IllegalStateException if the port is taken or not allowed
+     */
     public static HttpService start(HttpSettings settings, Services services, Tokens tokens) {
         HttpService service = new HttpService(settings, services, tokens);
-        service.javalin.start();
+        try {
+            service.javalin.start();
+        } catch (JavalinBindException e) {
+            throw new IllegalStateException("cannot listen on " + settings.host() + ":" + settings.port()
+                    + "; the port is taken or not allowed", e);
+        }
         return service;
     }
 
@@ -101,7 +111,7 @@ public final class HttpService implements AutoCloseable {
         config.jetty.modifyServer(server -> {
             server.setStopTimeout(settings.drain().toMillis());
             server.setErrorHandler(new ServerErrors());
-            // Without it the server would cut off running requests when it stops.
+            // Turns new requests on open connections away while running ones finish.
             server.insertHandler(new GracefulHandler());
         });
         config.http.maxRequestSize = settings.maximumBodyBytes();

@@ -1,6 +1,7 @@
 package org.laddergate.http;
 
 import java.time.Duration;
+import org.laddergate.measurement.CurveRules;
 
 /**
  * How the service listens and what it bears.
@@ -21,7 +22,7 @@ public record HttpSettings(String host, int port, int maximumBodyBytes, int maxi
     /** On this machine only, with defaults for everything else. */
     public static HttpSettings local(int port) {
         return new HttpSettings("127.0.0.1", port, DEFAULT_BODY_BYTES,
-                org.laddergate.measurement.CurveRules.DEFAULT_MAXIMUM_SAMPLES, DEFAULT_REQUEST_THREADS,
+                CurveRules.DEFAULT_MAXIMUM_SAMPLES, DEFAULT_REQUEST_THREADS,
                 Runtime.getRuntime().availableProcessors(), Duration.ofSeconds(10));
     }
 }

@@ -15,7 +15,9 @@ import java.io.ByteArrayOutputStream;
 import java.io.IOException;
 import java.io.UncheckedIOException;
 
-/** JSON as this service reads and writes it: field names given twice and deep nesting are refused, NaN is never written. */
+/**
+ * JSON as this service reads and writes it: field names given twice and deep nesting are refused, NaN is never written.
+ */
 final class Json {
     private static final int MAXIMUM_DEPTH = 32;
 

@@ -2,11 +2,13 @@ package org.laddergate.http;
 
 import com.fasterxml.jackson.databind.JsonNode;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
+import java.util.function.BiFunction;
 import java.util.function.Function;
 import org.laddergate.measurement.InputFault;
 
@@ -101,7 +103,7 @@ final class JsonFields {
                 return Optional.of(value);
             }
         }
-        List<String> words = java.util.Arrays.stream(values).map(word).toList();
+        List<String> words = Arrays.stream(values).map(word).toList();
         if (!has(field)) {
             fault(field, "missing", field + " is missing; it is one of " + words);
         } else if (get(field).isTextual()) {
@@ -171,7 +173,7 @@ final class JsonFields {
     }
 
     /** Elements of an array, each with its pointer as the second argument; empty if the field is not given. */
-    <T> List<T> elements(String field, java.util.function.BiFunction<JsonNode, String, Optional<T>> reader) {
+    <T> List<T> elements(String field, BiFunction<JsonNode, String, Optional<T>> reader) {
         List<T> read = new ArrayList<>();
         if (has(field) && !get(field).isArray()) {
             fault(field, "wrong_type", field + " must be an array");

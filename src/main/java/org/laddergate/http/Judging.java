@@ -14,7 +14,9 @@ import org.laddergate.screening.Judgement;
 import org.laddergate.screening.ScreeningDesk;
 import org.laddergate.screening.StoredVerdict;
 
-/** Parses, judges and counts one transient; used by single requests and batches alike. Safe for use from many threads. */
+/**
+ * Parses, judges and counts one transient; used by single requests and batches alike. Safe for use from many threads.
+ */
 final class Judging {
     /** No healthy disk takes longer to commit. */
     private static final Duration STORAGE_PATIENCE = Duration.ofSeconds(30);

@@ -1,6 +1,7 @@
 package org.laddergate.http;
 
 import io.javalin.http.Context;
+import java.util.Optional;
 import org.laddergate.golden.GoldenStore;
 import org.laddergate.golden.LimitLearning;
 import org.laddergate.limits.DecisionSettings;
@@ -69,7 +70,7 @@ record LimitHandlers(Bodies bodies, ProductStore products, GoldenStore units, Li
         Product product = ProductHandlers.find(ctx, products);
         String revision = ctx.pathParam("revision");
         return (revision.matches("[1-9][0-9]{0,8}") ? limits.find(product.name(), Integer.parseInt(revision))
-                : java.util.Optional.<LimitSet>empty()).orElseThrow(() -> Problem.of(ProblemCode.UNKNOWN_REVISION,
+                : Optional.<LimitSet>empty()).orElseThrow(() -> Problem.of(ProblemCode.UNKNOWN_REVISION,
                         new InputFault("/revision", "unknown_revision", "product " + product.name()
                                 + " has no limit revision '" + (revision.length() <= 20 ? revision
                                         : revision.substring(0, 20) + "...") + "'")).asException());

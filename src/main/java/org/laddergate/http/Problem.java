@@ -1,5 +1,7 @@
 package org.laddergate.http;
 
+import com.fasterxml.jackson.core.JsonGenerator;
+import java.io.IOException;
 import java.util.List;
 import java.util.Map;
 import org.laddergate.measurement.InputFault;
@@ -54,8 +56,8 @@ record Problem(ProblemCode code, String detail, List<InputFault> faults, Map<Str
         return Json.bytes(g -> writeTo(g, requestId, line, measurementId));
     }
 
-    private void writeTo(com.fasterxml.jackson.core.JsonGenerator g, String requestId, long line, String measurementId)
-            throws java.io.IOException {
+    private void writeTo(JsonGenerator g, String requestId, long line, String measurementId)
+            throws IOException {
         g.writeStartObject();
         g.writeStringField("type", code.type());
         g.writeStringField("title", code.title());

@@ -5,8 +5,8 @@ import java.util.Locale;
 import java.util.Optional;
 
 /**
- * Every kind of problem the service answers with, RFC 9457. The word is part of the contract: it is the last part of the
- * {@code type} and the address of the explanation under {@code /problems/}.
+ * Every kind of problem the service answers with, RFC 9457. The word is part of the contract: it is the last part of
+ * the {@code type} and the address of the explanation under {@code /problems/}.
  */
 enum ProblemCode {
     MALFORMED_REQUEST(400, "The request itself is broken",
@@ -31,8 +31,8 @@ enum ProblemCode {
     REQUEST_TIMEOUT(408, "The body did not arrive in time", "Send the request again."),
     METHOD_NOT_ALLOWED(405, "The address does not take this method", "The Allow header lists the methods it takes."),
     NO_RELEASED_LIMITS(409, "The product has no released limits",
-            "Nothing can be judged before a limit set of the product is released. The curve was not stored; send it again "
-                    + "after the release."),
+            "Nothing can be judged before a limit set of the product is released. The curve was not stored; send it "
+                    + "again after the release."),
     MEASUREMENT_CONFLICT(409, "The measurement id is taken by another content",
             "A measurement with this id and another content is stored. Ids must be unique for ever: give the new "
                     + "measurement its own."),
@@ -41,8 +41,8 @@ enum ProblemCode {
     NOT_A_DRAFT(409, "Only a draft can be released",
             "The revision is released or withdrawn already. Learn a new draft."),
     BODY_TOO_LARGE(413, "The body is too large",
-            "The limit counts decompressed bytes. Thin the curve (about 50 samples a decade carry everything), or raise "
-                    + "the limit in the configuration."),
+            "The limit counts decompressed bytes. Thin the curve (about 50 samples a decade carry everything), or "
+                    + "raise the limit in the configuration."),
     URI_TOO_LONG(414, "The address is too long", "Shorten it."),
     UNSUPPORTED_CONTENT_TYPE(415, "The content type is not accepted here",
             "Curves come as application/json or text/csv, batches as application/x-ndjson, the rest as "
@@ -57,8 +57,8 @@ enum ProblemCode {
                     + "neither pass nor fail."),
     OVERLOADED(503, "The service is busy", "Send the request again after the seconds in Retry-After."),
     STORAGE_UNAVAILABLE(503, "The verdict cannot be stored at the moment",
-            "No verdict is given that is not stored. Hold the part and send the same request again after the seconds in "
-                    + "Retry-After; the measurement id makes that safe.");
+            "No verdict is given that is not stored. Hold the part and send the same request again after the seconds "
+                    + "in Retry-After; the measurement id makes that safe.");
 
     private final int status;
     private final String title;

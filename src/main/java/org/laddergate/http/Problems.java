@@ -20,7 +20,8 @@ import org.slf4j.LoggerFactory;
 /** The one table from what went wrong to what is answered. Whatever is not in it is a fault of ours. */
 final class Problems {
     private static final Logger LOG = LoggerFactory.getLogger(Problems.class);
-    private static final String NEUTRAL = "The request could not be served. The fault was logged under this request id.";
+    private static final String NEUTRAL =
+            "The request could not be served. The fault was logged under this request id.";
 
     private Problems() {}
 

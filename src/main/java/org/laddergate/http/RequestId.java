@@ -8,8 +8,8 @@ import java.util.regex.Matcher;
 import java.util.regex.Pattern;
 
 /**
- * Name of a request in answers and in the log: the trace id of a W3C {@code traceparent} header if there is a valid one,
- * else a valid {@code X-Request-Id}, else a new one.
+ * Name of a request in answers and in the log: the trace id of a W3C {@code traceparent} header if there is a valid
+ * one, else a valid {@code X-Request-Id}, else a new one.
  */
 final class RequestId {
     private static final String ATTRIBUTE = "laddergate.request-id";

@@ -3,6 +3,7 @@ package org.laddergate.http;
 import com.fasterxml.jackson.core.JsonGenerator;
 import java.io.IOException;
 import java.util.List;
+import java.util.stream.IntStream;
 import org.laddergate.screening.Judgement;
 import org.laddergate.screening.Outcome;
 import org.laddergate.screening.Reason;
@@ -159,7 +160,7 @@ final class VerdictJson {
     }
 
     private static int[] filledBins(Trace trace) {
-        return java.util.stream.IntStream.range(0, trace.binTimesSeconds().length)
+        return IntStream.range(0, trace.binTimesSeconds().length)
                 .filter(bin -> Double.isFinite(trace.binTemperaturesCelsius()[bin])).toArray();
     }
 }

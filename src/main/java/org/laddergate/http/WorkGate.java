@@ -6,8 +6,8 @@ import java.util.concurrent.TimeUnit;
 import java.util.function.Supplier;
 
 /**
- * Lets only as many requests compute at once as there are cores: more would only make each of them slower. Reading bodies
- * and waiting for the disk happen outside. Safe for use from many threads.
+ * Lets only as many requests compute at once as there are cores: more would only make each of them slower. Reading
+ * bodies and waiting for the disk happen outside. Safe for use from many threads.
  */
 final class WorkGate {
     private final Semaphore permits;

@@ -18,10 +18,10 @@ import java.util.Map;
  * ...
  * </pre>
  *
- * <p>Header lines are optional and carry the same names as the JSON fields; unknown names are ignored, so files may hold
- * notes. The second column is {@code temperatureCelsius} or {@code voltageVolts}. Lines end with LF or CR LF; fields may
- * be quoted as in RFC 4180, but not span lines. Numbers have a decimal point. Text is UTF-8, with or without a byte order
- * mark.
+ * <p>Header lines are optional and carry the same names as the JSON fields; unknown names are ignored, so files may
+ * hold notes. The second column is {@code temperatureCelsius} or {@code voltageVolts}. Lines end with LF or CR LF;
+ * fields may be quoted as in RFC 4180, but not span lines. Numbers have a decimal point. Text is UTF-8, with or without
+ * a byte order mark.
  *
  * <p>Cost: one pass, no object per row; numbers of up to 15 digits are read without a conversion to text.
  *

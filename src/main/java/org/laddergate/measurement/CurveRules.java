@@ -11,8 +11,8 @@ import java.util.ArrayList;
 import java.util.List;
 
 /**
- * What a transient must satisfy before anything is done with it. Only the impossible is refused here: a curve of an open
- * sensor at a rail of -250 deg C is possible, is accepted, and is later judged not to be believed.
+ * What a transient must satisfy before anything is done with it. Only the impossible is refused here: a curve of an
+ * open sensor at a rail of -250 deg C is possible, is accepted, and is later judged not to be believed.
  *
  * <p>All faults are reported at once, except that at most one fault of each kind is reported per curve.
  *

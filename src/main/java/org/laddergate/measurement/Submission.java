@@ -5,8 +5,8 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 
 /**
- * One transient exactly as somebody sent it or wrote it into a file: nothing checked, nothing filled in. Text fields are
- * empty and numbers absent when they were not given. {@link CurveRules} turns it into a {@link Measurement}.
+ * One transient exactly as somebody sent it or wrote it into a file: nothing checked, nothing filled in. Text fields
+ * are empty and numbers absent when they were not given. {@link CurveRules} turns it into a {@link Measurement}.
  *
  * @param measurementId     the sender's name for the measurement
  * @param product           product name

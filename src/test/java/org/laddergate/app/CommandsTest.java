@@ -8,6 +8,8 @@ import java.io.IOException;
 import java.io.InputStreamReader;
 import java.io.PrintWriter;
 import java.io.StringWriter;
+import java.net.InetAddress;
+import java.net.ServerSocket;
 import java.net.URI;
 import java.net.http.HttpClient;
 import java.net.http.HttpRequest;
@@ -93,6 +95,15 @@ class CommandsTest {
         assertEquals(1, run("serve", "--port", "x"));
         assertTrue(out.toString().contains("--port (LADDERGATE_PORT): 'x'"), out.toString());
         assertEquals(1, run("serve", "--host", "0.0.0.0"));
+    }
+
+    @Test
+    void takenPort_isToldInASentence() throws IOException {
+        try (ServerSocket taken = new ServerSocket(0, 1, InetAddress.getLoopbackAddress())) {
+            assertEquals(1, run("serve", "--port", Integer.toString(taken.getLocalPort())));
+            assertEquals("cannot listen on 127.0.0.1:" + taken.getLocalPort()
+                    + "; the port is taken or not allowed", out.toString().strip());
+        }
     }
 
     @Test

@@ -18,7 +18,7 @@ import org.laddergate.screening.VerdictLedger;
 
 /** Stores in memory; verdicts take their time, as on a slow disk. */
 final class InMemoryWiring extends Wiring {
-    private static final Executor SLOW = CompletableFuture.delayedExecutor(700, TimeUnit.MILLISECONDS);
+    private static final Executor SLOW = CompletableFuture.delayedExecutor(2500, TimeUnit.MILLISECONDS);
 
     final InMemoryProducts products = new InMemoryProducts();
     final InMemoryLimits limits = new InMemoryLimits();

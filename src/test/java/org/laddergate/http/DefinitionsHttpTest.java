@@ -89,8 +89,8 @@ class DefinitionsHttpTest {
                         + "\"decision\":{\"content\":1.5}}")));
         assertEquals(Map.of("/recipe", "missing", "/layer", "unknown_field"), faults(put("{\"layer\":[]}")));
         assertEquals(Map.of("", "impossible_product"), faults(put(
-                TestService.PRODUCT.replaceFirst("\"layers\":", "\"regions\":[{\"name\":\"a\",\"fromJoulesPerKelvin\":0,"
-                        + "\"toJoulesPerKelvin\":1}],\"layers\":"))));
+                TestService.PRODUCT.replaceFirst("\"layers\":", "\"regions\":[{\"name\":\"a\","
+                        + "\"fromJoulesPerKelvin\":0,\"toJoulesPerKelvin\":1}],\"layers\":"))));
         assertEquals(Map.of("/regions/0/fromJoulesPerKelvin", "out_of_range"), faults(put(TestService.PRODUCT
                 .replaceAll("(?s)\"layers\":.*", "\"regions\":[{\"name\":\"a\",\"fromJoulesPerKelvin\":2,"
                         + "\"toJoulesPerKelvin\":1}]}"))));

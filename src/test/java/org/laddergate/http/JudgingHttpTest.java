@@ -98,7 +98,8 @@ class JudgingHttpTest {
 
     @Test
     void csv_isTheSameMeasurementAsJson() {
-        StringBuilder csv = new StringBuilder("# serial: 24A7-0193\r\n# lot: L2411\r\ntimeSeconds,temperatureCelsius\r\n");
+        StringBuilder csv = new StringBuilder("# serial: 24A7-0193\r\n# lot: L2411\r\n");
+        csv.append("timeSeconds,temperatureCelsius\r\n");
         StringBuilder times = new StringBuilder();
         StringBuilder values = new StringBuilder();
         for (int i = 1; i <= 10; i++) {
@@ -180,7 +181,8 @@ class JudgingHttpTest {
         String lines = TestService.curve("b1", 80) + "\n" + "{\"measurementId\":\"b2\",\"timeSeconds\":[1,\n\n"
                 + TestService.curve("b3", 160) + "\r\n" + TestService.curve("b4", 80).replace("hb40", "hb41") + "\n"
                 + TestService.curve("b1", 99) + "\n" + TestService.curve("b5", 0);
-        List<String> answers = service.request().contentType("application/x-ndjson").body(lines.getBytes(StandardCharsets.UTF_8))
+        List<String> answers = service.request().contentType("application/x-ndjson")
+                .body(lines.getBytes(StandardCharsets.UTF_8))
                 .post("/v1/transients/batch").then().statusCode(200).contentType("application/x-ndjson").extract()
                 .asString().lines().toList();
         assertEquals(6, answers.size());
@@ -220,7 +222,8 @@ class JudgingHttpTest {
     void batch_lineOverTheLimit_spoilsNoOther() throws IOException {
         String huge = "{\"measurementId\":\"" + "x".repeat(TestService.BODY_LIMIT) + "\"}";
         List<String> answers = service.request().contentType("application/x-ndjson")
-                .body((huge + "\n" + TestService.curve("b1", 80)).getBytes(StandardCharsets.UTF_8)).post("/v1/transients/batch").then().statusCode(200)
+                .body((huge + "\n" + TestService.curve("b1", 80)).getBytes(StandardCharsets.UTF_8))
+                .post("/v1/transients/batch").then().statusCode(200)
                 .extract().asString().lines().toList();
         assertEquals(413, Json.MAPPER.readTree(answers.get(0)).path("status").asInt());
         assertEquals("pass", Json.MAPPER.readTree(answers.get(1)).path("verdict").asText());
