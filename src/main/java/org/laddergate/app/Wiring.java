@@ -1,14 +1,28 @@
 package org.laddergate.app;
 
+import io.micrometer.core.instrument.DistributionSummary;
+import io.micrometer.core.instrument.Gauge;
+import io.micrometer.core.instrument.Timer;
 import io.micrometer.prometheusmetrics.PrometheusConfig;
 import io.micrometer.prometheusmetrics.PrometheusMeterRegistry;
 import java.time.Clock;
 import java.util.List;
+import java.util.Optional;
+import java.util.concurrent.TimeUnit;
+import org.laddergate.golden.GoldenFolder;
+import org.laddergate.golden.GoldenLearner;
 import org.laddergate.golden.GoldenStore;
 import org.laddergate.golden.LimitLearning;
 import org.laddergate.http.Services;
 import org.laddergate.limits.LimitStore;
 import org.laddergate.limits.ProductStore;
+import org.laddergate.limits.files.LimitFiles;
+import org.laddergate.limits.files.ProductFiles;
+import org.laddergate.measurement.CurveRules;
+import org.laddergate.records.SqliteLedger;
+import org.laddergate.screening.Engine;
+import org.laddergate.screening.Plan;
+import org.laddergate.screening.Screener;
 import org.laddergate.screening.ScreeningDesk;
 import org.laddergate.screening.VerdictLedger;
 
@@ -20,6 +34,8 @@ class Wiring implements AutoCloseable {
     private final Settings settings;
     private final Clock clock = Clock.systemUTC();
     private final PrometheusMeterRegistry registry = new PrometheusMeterRegistry(PrometheusConfig.DEFAULT);
+    private Optional<SqliteLedger> ledger = Optional.empty();
+    private volatile boolean warming;
 
     Wiring(Settings settings) {
         this.settings = settings;
@@ -39,47 +55,73 @@ class Wiring implements AutoCloseable {
 
     /** Product definitions in the limits folder. */
     ProductStore products() {
-        throw missing("product store");
+        return new ProductFiles(settings.limits());
     }
 
     /** Limit sets in the limits folder. */
     LimitStore limits() {
-        throw missing("limit store");
+        return new LimitFiles(settings.limits(), clock);
     }
 
     /** Golden units in their folder. */
     GoldenStore goldenUnits() {
-        throw missing("store of golden units");
+        return new GoldenFolder(settings.goldenUnits(), products(), new CurveRules(settings.http().maximumSamples(), clock));
     }
 
     /** Learns limits. */
     LimitLearning learning() {
-        throw missing("limit learning");
+        return new GoldenLearner(clock);
     }
 
     /** Stored verdicts in the data folder. */
     VerdictLedger ledger() {
-        throw missing("verdict ledger");
+        Timer commits = Timer.builder("laddergate.commit.duration").publishPercentileHistogram().register(registry);
+        DistributionSummary sizes = DistributionSummary.builder("laddergate.commit.verdicts").register(registry);
+        SqliteLedger opened = SqliteLedger.open(settings.data(), clock, (verdicts, nanos) -> {
+            commits.record(nanos, TimeUnit.NANOSECONDS);
+            sizes.record(verdicts);
+        });
+        Gauge.builder("laddergate.commit.queue", opened, SqliteLedger::queueLength).register(registry);
+        ledger = Optional.of(opened);
+        return opened;
     }
 
     /** Judges and stores. */
-    ScreeningDesk desk(ProductStore products, LimitStore limits, VerdictLedger ledger) {
-        throw missing("screening desk");
+    ScreeningDesk desk(ProductStore products, LimitStore limits, VerdictLedger verdicts) {
+        Timer analysis = Timer.builder("laddergate.analysis.duration").publishPercentileHistogram().register(registry);
+        Engine engine = new Engine(products, limits, verdicts, nanos -> analysis.record(nanos, TimeUnit.NANOSECONDS));
+        warmUp(engine, products);
+        return engine;
+    }
+
+    /** Plans are worked out in the background; until then the service says that it is not ready. */
+    private void warmUp(Engine engine, ProductStore products) {
+        warming = true;
+        Thread thread = new Thread(() -> {
+            try {
+                products.names().forEach(engine::warmUp);
+            } finally {
+                warming = false;
+            }
+        }, "warm-up");
+        thread.setDaemon(true);
+        thread.start();
     }
 
     /** Judges without storing. */
     CurveJudge curveJudge() {
-        throw missing("curve judge");
+        return (measurement, limits) -> new Screener(Plan.of(limits)).judge(measurement);
     }
 
     /** Reasons besides the ledger's why nothing can be judged now, such as a warm-up that is not finished. */
     List<String> notReady() {
-        return List.of();
+        return warming ? List.of("the limits are being prepared") : List.of();
     }
 
     /** Closes what was opened, after the last request. */
     @Override
     public void close() {
+        ledger.ifPresent(SqliteLedger::close);
         registry.close();
     }
 
@@ -87,14 +129,11 @@ class Wiring implements AutoCloseable {
     final Services services() {
         ProductStore products = products();
         LimitStore limits = limits();
-        GoldenStore goldenUnits = goldenUnits();
+        GoldenStore goldenUnits = new GoldenFolder(settings.goldenUnits(), products,
+                new CurveRules(settings.http().maximumSamples(), clock));
         LimitLearning learning = learning();
-        VerdictLedger ledger = ledger();
-        return new Services(products, limits, goldenUnits, learning, desk(products, limits, ledger), ledger, clock,
+        VerdictLedger verdicts = ledger();
+        return new Services(products, limits, goldenUnits, learning, desk(products, limits, verdicts), verdicts, clock,
                 registry, this::notReady);
-    }
-
-    private static IllegalStateException missing(String part) {
-        return new IllegalStateException("this build has no " + part);
     }
 }

@@ -57,6 +57,6 @@ public final class InMemoryLimits implements LimitStore {
 
     private static LimitSet copy(LimitSet from, int revision, LimitState state, String sha256) {
         return new LimitSet(from.product(), revision, state, sha256, from.learntAt(), from.recipe(), from.settings(),
-                from.goldenUnits(), from.regionLimits(), from.remarks());
+                from.goldenUnits(), from.regionLimits(), from.model(), from.remarks());
     }
 }

@@ -7,6 +7,8 @@ import java.util.concurrent.CompletionStage;
 import org.laddergate.golden.GoldenUnit;
 import org.laddergate.golden.LimitLearning;
 import org.laddergate.limits.LimitNotFoundException;
+import org.laddergate.limits.Envelope;
+import org.laddergate.limits.GoldenModel;
 import org.laddergate.limits.LimitSet;
 import org.laddergate.limits.LimitState;
 import org.laddergate.limits.LimitStore;
@@ -29,6 +31,11 @@ import org.laddergate.screening.VerdictLedger;
 
 /** The simplest judge there is: one region, its resistance the whole temperature swing per watt, golden mean +-20 %. */
 public final class TotalResistance implements LimitLearning, ScreeningDesk {
+    /** This judge needs no model of the golden family. */
+    private static final GoldenModel NO_MODEL = new GoldenModel(1, 2, 1, new double[0], new double[0], new double[0],
+            new double[0][], 0, 0, 0, new double[0], new double[0], List.of(), List.of(), false, new double[0],
+            new Envelope(new double[0], new double[0], new double[0]));
+
     private final ProductStore products;
     private final LimitStore limits;
     private final VerdictLedger ledger;
@@ -45,9 +52,9 @@ public final class TotalResistance implements LimitLearning, ScreeningDesk {
                 .mapToDouble(unit -> resistance(unit.measurement())).average().orElseThrow(
                         () -> new InvalidInputException("/goldenUnits", "too_few_units", "0 golden units; 1 needed"));
         RegionLimit limit = new RegionLimit(new Region("stack", RegionRole.PART, 0, Double.POSITIVE_INFINITY), true,
-                mean, Double.NaN, Double.NaN, 0.8 * mean, 1.2 * mean, "learnt");
+                mean, Double.NaN, Double.NaN, Double.NaN, 0.8 * mean, 1.2 * mean, "learnt");
         return new LimitSet(product.name(), 0, LimitState.DRAFT, "", Instant.parse("2026-12-01T06:00:00Z"),
-                product.recipe(), product.settings(), units.size(), List.of(limit), List.of("one region only"));
+                product.recipe(), product.settings(), units.size(), List.of(limit), NO_MODEL, List.of("one region only"));
     }
 
     @Override
