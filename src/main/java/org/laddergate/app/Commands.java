@@ -30,6 +30,7 @@ final class Commands {
         line.addSubcommand(configured(new LearnCommand(wiring, environment), Setting.GOLDEN_UNITS, Setting.LIMITS));
         line.addSubcommand(configured(new ReleaseCommand(wiring, environment), Setting.LIMITS));
         line.addSubcommand(configured(new JudgeCommand(wiring, environment), Setting.LIMITS, Setting.MAX_SAMPLES));
+        line.addSubcommand(configured(new DemoCommand(wiring, environment), Setting.values()));
         line.addSubcommand(new TokenCommand());
         line.setExecutionExceptionHandler(Commands::explain);
         return line;
