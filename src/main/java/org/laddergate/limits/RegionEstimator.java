@@ -5,6 +5,7 @@ import java.util.List;
 import org.apache.commons.math3.linear.Array2DRowRealMatrix;
 import org.apache.commons.math3.linear.ArrayRealVector;
 import org.apache.commons.math3.linear.CholeskyDecomposition;
+import org.apache.commons.math3.linear.DecompositionSolver;
 import org.apache.commons.math3.linear.RealMatrix;
 import org.laddergate.limits.evidence.FamilyModel;
 
@@ -23,30 +24,48 @@ import org.laddergate.limits.evidence.FamilyModel;
  * <p>Cost: one product of length m for a reading. Immutable.
  */
 public final class RegionEstimator {
-    private final double[][] whitening;
-    private final double[] weights;
-    private final double uncertainty;
     private final double[][] otherCovariance;
+    private final double[] perKelvinPerWatt;
+    private final RealMatrix precision;
+    private final Weights weights;
+
+    /**
+     * A reading.
+     *
+     * @param excessKelvinPerWatt       excess over the golden resistance [K/W]
+     * @param uncertaintyKelvinPerWatt  its standard uncertainty [K/W]
+     */
+    public record Reading(double excessKelvinPerWatt, double uncertaintyKelvinPerWatt) {}
+
+    private record Weights(double[] values, double uncertainty) {}
 
     private RegionEstimator(double[][] otherCovariance, double[] perKelvinPerWatt) {
         this.otherCovariance = otherCovariance;
+        this.perKelvinPerWatt = perKelvinPerWatt;
         RealMatrix contrasts = FamilyModel.contrasts(perKelvinPerWatt.length);
-        RealMatrix reduced = contrasts.multiply(new Array2DRowRealMatrix(otherCovariance, false))
+        DecompositionSolver solver = solver(contrasts, otherCovariance);
+        this.weights = weights(contrasts, solver, perKelvinPerWatt);
+        this.precision = contrasts.transpose().multiply(solver.solve(contrasts));
+    }
+
+    private static DecompositionSolver solver(RealMatrix contrasts, double[][] covariance) {
+        RealMatrix reduced = contrasts.multiply(new Array2DRowRealMatrix(covariance, false))
                 .multiply(contrasts.transpose());
-        var solver = new CholeskyDecomposition(FamilyModel.symmetrised(reduced)).getSolver();
-        double[] s = contrasts.operate(perKelvinPerWatt);
+        return new CholeskyDecomposition(FamilyModel.symmetrised(reduced)).getSolver();
+    }
+
+    private static Weights weights(RealMatrix contrasts, DecompositionSolver solver, double[] shape) {
+        double[] s = contrasts.operate(shape);
         double[] image = solver.solve(new ArrayRealVector(s, false)).toArray();
         double information = 0;
         for (int i = 0; i < s.length; i++) {
             information += s[i] * image[i];
         }
-        double[] w = contrasts.transpose().operate(image);
+        double[] w = contrasts.preMultiply(image);
         for (int i = 0; i < w.length; i++) {
             w[i] /= information;
         }
-        this.weights = w;
-        this.uncertainty = 1 / Math.sqrt(information);
-        this.whitening = solver.solve(contrasts).getData();
+        return new Weights(w, 1 / Math.sqrt(information));
     }
 
     /**
@@ -60,8 +79,8 @@ public final class RegionEstimator {
         return new RegionEstimator(otherCovariance(region, directions, base), perKelvinPerWatt(slight));
     }
 
-    /** The same reading when something else may have happened as well, with the given covariance [K^2]. */
-    public RegionEstimator allowing(double[][] covariance, FaultSignature slight) {
+    /** Reads when something else may have happened to the curve as well, with the given covariance [K^2]. */
+    public Reading readAllowing(double[][] covariance, double[] deviationKelvin) {
         int m = covariance.length;
         double[][] sum = new double[m][m];
         for (int i = 0; i < m; i++) {
@@ -69,7 +88,9 @@ public final class RegionEstimator {
                 sum[i][j] = otherCovariance[i][j] + covariance[i][j];
             }
         }
-        return new RegionEstimator(sum, perKelvinPerWatt(slight));
+        RealMatrix contrasts = FamilyModel.contrasts(m);
+        Weights lenient = weights(contrasts, solver(contrasts, sum), perKelvinPerWatt);
+        return new Reading(product(lenient.values(), deviationKelvin), lenient.uncertainty());
     }
 
     private static double[][] otherCovariance(String region, List<SpreadDirection> directions, double[][] base) {
@@ -98,35 +119,25 @@ public final class RegionEstimator {
 
     /** Excess over the golden resistance [K/W]. */
     public double excessKelvinPerWatt(double[] deviationKelvin) {
-        double sum = 0;
-        for (int i = 0; i < weights.length; i++) {
-            sum += weights[i] * deviationKelvin[i];
-        }
-        return sum;
+        return product(weights.values(), deviationKelvin);
     }
 
     /** Standard uncertainty of a reading [K/W]. */
     public double uncertaintyKelvinPerWatt() {
-        return uncertainty;
+        return weights.uncertainty();
     }
 
-    /** Size of any signature in a deviation under the same covariance, in units of the signature, and its variance. */
-    public double[] size(double[] signatureKelvin, double[] deviationKelvin) {
-        int n = whitening.length;
-        RealMatrix contrasts = FamilyModel.contrasts(n + 1);
-        double[] s = contrasts.operate(signatureKelvin);
-        double along = 0;
-        double information = 0;
-        for (int i = 0; i < n; i++) {
-            double d = 0;
-            double k = 0;
-            for (int j = 0; j <= n; j++) {
-                d += whitening[i][j] * deviationKelvin[j];
-                k += whitening[i][j] * signatureKelvin[j];
-            }
-            along += s[i] * d;
-            information += s[i] * k;
+    /** Size of any signature in a deviation under the same covariance, in units of the signature. */
+    public double size(double[] signatureKelvin, double[] deviationKelvin) {
+        double[] image = precision.operate(signatureKelvin);
+        return product(image, deviationKelvin) / product(image, signatureKelvin);
+    }
+
+    private static double product(double[] a, double[] b) {
+        double sum = 0;
+        for (int i = 0; i < a.length; i++) {
+            sum += a[i] * b[i];
         }
-        return new double[] {along / information, 1 / information};
+        return sum;
     }
 }

@@ -58,30 +58,51 @@ final class RegionReading {
         };
     }
 
-    /** Results of all regions; with a named subject they are read conditional on its fault. */
-    List<RegionResult> results(Optional<Integer> named, double noiseRatio) {
+    /** Results of all regions of a part that is not known to have a fault. */
+    List<RegionResult> results(double noiseRatio) {
         List<RegionResult> out = new ArrayList<>(plan.regions().size());
-        Optional<double[][]> allowed = named.map(this::allowance);
         for (RegionPlan region : plan.regions()) {
-            if (!region.limit().assessed()) {
-                out.add(unread(region));
-                continue;
-            }
-            int subject = subjectOf(region.name());
-            double resistance = region.resistanceKelvinPerWatt(work.compared);
-            double uncertainty = region.limit().uncertaintyKelvinPerWatt();
-            if (allowed.isPresent() && named.get() == subject) {
-                double[] excess = namedExcess(region, subject);
-                resistance = region.limit().goldenMeanKelvinPerWatt() + excess[0];
-                uncertainty = Math.hypot(uncertainty, excess[1]);
-            } else if (allowed.isPresent()) {
-                RegionEstimator lenient = region.estimator().allowing(allowed.get(), region.slight());
-                resistance = region.limit().goldenMeanKelvinPerWatt() + lenient.excessKelvinPerWatt(work.compared);
-                uncertainty = lenient.uncertaintyKelvinPerWatt();
-            }
-            out.add(result(region, resistance, uncertainty * Math.max(1, noiseRatio), work.posterior[subject]));
+            out.add(!region.limit().assessed() ? unread(region)
+                    : result(region, region.resistanceKelvinPerWatt(work.compared),
+                            region.limit().uncertaintyKelvinPerWatt() * Math.max(1, noiseRatio),
+                            work.posterior[subjectOf(region.name())]));
         }
         return out;
+    }
+
+    /** What is read when a fault is named: all regions, and those that stand out besides the named one. */
+    record Conditional(List<RegionResult> results, List<String> otherSuspects) {}
+
+    private record Suspect(String region, double sigmas) {}
+
+    /** Results conditional on the fault of a named subject. */
+    Conditional given(int named, double noiseRatio) {
+        Explanation best = bestExplanation(named);
+        double[][] allowed = best.allowance(best.size(work.whitened));
+        List<RegionResult> out = new ArrayList<>(plan.regions().size());
+        List<Suspect> suspects = new ArrayList<>();
+        for (RegionPlan region : plan.regions()) {
+            int subject = region.limit().assessed() ? subjectOf(region.name()) : -1;
+            double golden = region.limit().goldenMeanKelvinPerWatt();
+            if (subject < 0) {
+                out.add(unread(region));
+            } else if (subject == named) {
+                double[] excess = namedExcess(region, subject);
+                out.add(result(region, golden + excess[0],
+                        Math.hypot(region.limit().uncertaintyKelvinPerWatt() * Math.max(1, noiseRatio), excess[1]),
+                        work.posterior[subject]));
+            } else {
+                RegionEstimator.Reading read = region.estimator().readAllowing(allowed, work.compared);
+                out.add(result(region, golden + read.excessKelvinPerWatt(),
+                        read.uncertaintyKelvinPerWatt() * Math.max(1, noiseRatio), work.posterior[subject]));
+                double spread = Math.hypot(read.uncertaintyKelvinPerWatt(), region.limit().goldenSigmaKelvinPerWatt());
+                if (read.excessKelvinPerWatt() > SECOND_FAULT_SIGMAS * spread) {
+                    suspects.add(new Suspect(region.name(), read.excessKelvinPerWatt() / spread));
+                }
+            }
+        }
+        suspects.sort(Comparator.comparingDouble(Suspect::sigmas).reversed());
+        return new Conditional(out, suspects.stream().map(Suspect::region).toList());
     }
 
     /** Mean and standard deviation of the named region's excess resistance over its explanations [K/W]. */
@@ -94,8 +115,8 @@ final class RegionReading {
             double weight = Math.exp(work.explanationLog[e] - work.subjectLog[subject]);
             if (weight > 1e-4) {
                 FaultSignature s = evidence.explanation(e).signature().orElseThrow();
-                double[] size = region.estimator().size(s.deviationKelvin(), work.compared);
-                double added = size[0] * s.addedResistanceKelvinPerWatt();
+                double added = region.estimator().size(s.deviationKelvin(), work.compared)
+                        * s.addedResistanceKelvinPerWatt();
                 sum += weight;
                 mean += weight * added;
                 square += weight * added * added;
@@ -103,32 +124,6 @@ final class RegionReading {
         }
         mean /= sum;
         return new double[] {mean, Math.sqrt(Math.max(0, square / sum - mean * mean))};
-    }
-
-    /** What the named subject's best explanation may have done to the curve, as a covariance [K^2]. */
-    private double[][] allowance(int named) {
-        Explanation best = bestExplanation(named);
-        return best.allowance(best.size(work.whitened));
-    }
-
-    /** Regions that still stand out when the named fault is allowed for, largest first. */
-    List<String> otherSuspects(int named) {
-        double[][] allowed = allowance(named);
-        record Suspect(String region, double sigmas) {}
-        List<Suspect> suspects = new ArrayList<>();
-        for (RegionPlan region : plan.regions()) {
-            if (region.limit().assessed() && subjectOf(region.name()) != named) {
-                RegionEstimator lenient = region.estimator().allowing(allowed, region.slight());
-                double excess = lenient.excessKelvinPerWatt(work.compared);
-                double spread = Math.hypot(lenient.uncertaintyKelvinPerWatt(),
-                        region.limit().goldenSigmaKelvinPerWatt());
-                if (excess > SECOND_FAULT_SIGMAS * spread) {
-                    suspects.add(new Suspect(region.name(), excess / spread));
-                }
-            }
-        }
-        suspects.sort(Comparator.comparingDouble(Suspect::sigmas).reversed());
-        return suspects.stream().map(Suspect::region).toList();
     }
 
     List<RegionResult> unread() {

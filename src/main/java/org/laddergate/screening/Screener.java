@@ -3,9 +3,9 @@ package org.laddergate.screening;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
-import java.util.Optional;
 import org.laddergate.limits.GoldenModel;
 import org.laddergate.limits.LimitSet;
+import org.laddergate.limits.RegionRole;
 import org.laddergate.limits.evidence.EvidenceModel;
 import org.laddergate.limits.evidence.FamilyModel;
 import org.laddergate.limits.evidence.Subject;
@@ -28,6 +28,8 @@ public final class Screener {
 
     /** A part is measured again, instead of failed, only when an error of the measurement is this probable. */
     static final double CERTAIN_ENOUGH = 0.9;
+
+    private static final double LIKELY = 0.5;
 
     private final Plan plan;
     private final Workspace work;
@@ -82,11 +84,11 @@ public final class Screener {
         double shape = evidence.logFaultRatio(work.subjectLog);
         StructureReading structure = StructureReading.of(plan, work);
         List<Reason> reasons = new ArrayList<>(0);
-        brokenLimits(tSquared, shape, structure, noiseRatio, reasons);
+        List<Reason> againstPart = new ArrayList<>(0);
+        brokenLimits(tSquared, shape, structure, noiseRatio, reasons, againstPart);
         if (reasons.isEmpty()) {
             return pass(noiseRatio, inFamily, tSquared, structure);
         }
-        int best = mostProbable(kind -> true);
         double wrongMeasurement = 0;
         for (int s = 0; s < work.posterior.length; s++) {
             if (evidence.subjects().get(s).kind() == Subject.Kind.MEASUREMENT) {
@@ -95,20 +97,28 @@ public final class Screener {
         }
         if (wrongMeasurement > CERTAIN_ENOUGH) {
             int error = mostProbable(kind -> kind == Subject.Kind.MEASUREMENT);
-            return doubtful(evidence.subjects().get(error), wrongMeasurement, tSquared, structure, noiseRatio);
+            return doubtful(evidence.subjects().get(error), wrongMeasurement, tSquared, structure);
         }
+        int best = mostProbable(kind -> kind != Subject.Kind.MEASUREMENT);
         if (evidence.subjects().get(best).kind() == Subject.Kind.FIXTURE_REGION) {
-            return fixture(evidence.subjects().get(best), work.posterior[best], tSquared, structure, noiseRatio);
+            if (work.posterior[best] > LIKELY) {
+                return fixture(evidence.subjects().get(best), work.posterior[best], tSquared, structure);
+            }
+            if (againstPart.isEmpty()) {
+                // A fixture a little off, or a shape that looks like one if anything, is no reason to reject a part.
+                return pass(noiseRatio, inFamily, tSquared, structure);
+            }
         }
         return fail(reasons, tSquared, structure, noiseRatio);
     }
 
     private void brokenLimits(double tSquared, double shape, StructureReading structure, double noiseRatio,
-            List<Reason> reasons) {
+            List<Reason> reasons, List<Reason> againstPart) {
         GoldenModel model = plan.limits().model();
         for (RegionPlan region : plan.regions()) {
             if (region.limit().assessed()) {
-                reading.brokenLimit(region, noiseRatio).ifPresent(reasons::add);
+                reading.brokenLimit(region, noiseRatio).ifPresent(
+                        region.limit().region().role() == RegionRole.PART ? againstPart::add : reasons::add);
             }
         }
         if (shape > model.shapeLimit()) {
@@ -116,14 +126,15 @@ public final class Screener {
                     + "log odds %.2f, limit %.2f.", shape, model.shapeLimit()), shape, model.shapeLimit()));
         }
         if (tSquared > model.inFamilyLimit()) {
-            reasons.add(new Reason("not_in_family", text("The curve is outside the golden family: T-squared %.1f, limit "
+            againstPart.add(new Reason("not_in_family", text("The curve is outside the golden family: T-squared %.1f, limit "
                     + "%.1f.", tSquared, model.inFamilyLimit()), tSquared, model.inFamilyLimit()));
         }
-        structure.reason().ifPresent(reasons::add);
+        structure.reason().ifPresent(againstPart::add);
+        reasons.addAll(0, againstPart);
     }
 
     private Judgement pass(double noiseRatio, double inFamily, double tSquared, StructureReading structure) {
-        List<RegionResult> regions = reading.results(Optional.empty(), noiseRatio);
+        List<RegionResult> regions = reading.results(noiseRatio);
         double confidence = 1;
         for (RegionResult r : regions) {
             if (r.assessed()) {
@@ -148,28 +159,25 @@ public final class Screener {
     private Judgement fail(List<Reason> reasons, double tSquared, StructureReading structure, double noiseRatio) {
         int best = mostProbable(kind -> kind != Subject.Kind.MEASUREMENT && kind != Subject.Kind.FIXTURE_REGION);
         Subject named = plan.evidence().subjects().get(best);
-        List<RegionResult> regions = reading.results(Optional.of(best), noiseRatio);
-        List<String> others = reading.otherSuspects(best);
-        return judgement(Outcome.FAIL, Disposition.REJECT, named.name(), others, work.posterior[best], regions, structure,
-                tSquared, reasons);
+        RegionReading.Conditional read = reading.given(best, noiseRatio);
+        return judgement(Outcome.FAIL, Disposition.REJECT, named.name(), read.otherSuspects(), work.posterior[best],
+                read.results(), structure, tSquared, reasons);
     }
 
-    private Judgement doubtful(Subject error, double probability, double tSquared, StructureReading structure,
-            double noiseRatio) {
+    private Judgement doubtful(Subject error, double probability, double tSquared, StructureReading structure) {
         String sentence = text("The curve is explained better by an error of the measurement (%s) than by a fault of the "
                 + "part; probability %.3f.", error.name().replace('_', ' '), probability);
         return judgement(Outcome.INVALID, Disposition.RETEST, "", List.of(), Double.NaN,
-                reading.results(Optional.empty(), noiseRatio), structure, tSquared,
+                reading.unread(), structure, tSquared,
                 List.of(new Reason(error.name(), sentence, probability, CERTAIN_ENOUGH)));
     }
 
-    private Judgement fixture(Subject region, double probability, double tSquared, StructureReading structure,
-            double noiseRatio) {
+    private Judgement fixture(Subject region, double probability, double tSquared, StructureReading structure) {
         String sentence = text("The tester's own region %s has shifted; probability %.3f. Clean and check the fixture.",
                 region.name(), probability);
         return judgement(Outcome.INVALID, Disposition.RETEST, "", List.of(), Double.NaN,
-                reading.results(Optional.empty(), noiseRatio), structure, tSquared,
-                List.of(new Reason(InvalidReason.FIXTURE_SHIFT.code(), sentence, probability, CERTAIN_ENOUGH)));
+                reading.unread(), structure, tSquared,
+                List.of(new Reason(InvalidReason.FIXTURE_SHIFT.code(), sentence, probability, LIKELY)));
     }
 
     private Judgement invalid(List<Finding> findings) {
