@@ -3,7 +3,7 @@
 -- Instants are nanoseconds since 1970-01-01T00:00Z.
 -- Probabilities may leave 0..1 by rounding only: the margin keeps percent out without refusing a part over one ulp.
 
-PRAGMA application_id = 1279542098;  -- 0x4c444752, "LDGR"
+PRAGMA application_id = 1279543122;  -- 0x4c444752, "LDGR"
 
 CREATE TABLE verdict (
     sequence                     INTEGER PRIMARY KEY CHECK (sequence >= 1),

@@ -142,7 +142,7 @@ final class LedgerWriter implements AutoCloseable {
                 refuseAll(rest, e);
                 return;
             } catch (RuntimeException | Error e) {
-                failed("the ledger writer failed: " + e.getClass().getSimpleName(), e);
+                failed(crash(e), e);
                 sessions.discard();
                 refuseAll(rest, e);
                 return;
@@ -180,6 +180,9 @@ final class LedgerWriter implements AutoCloseable {
         } catch (SQLException e) {
             failed(SqlFaults.reason(e), e);
             sessions.repairAfter(e);
+        } catch (RuntimeException e) {
+            failed(crash(e), e);
+            sessions.discard();
         }
     }
 
@@ -196,6 +199,10 @@ final class LedgerWriter implements AutoCloseable {
             LOG.error("the ledger cannot store: {}", reason, cause);
         }
         failure = Optional.of(reason);
+    }
+
+    private static String crash(Throwable e) {
+        return "the ledger writer failed (" + e.getClass().getSimpleName() + ")";
     }
 
     private void recovered() {

@@ -20,9 +20,8 @@ final class SessionKeeper {
 
     /** @throws LedgerOpenException if the file cannot be used */
     static SessionKeeper open(LedgerFile file) {
-        var connection = file.create();
         try {
-            return new SessionKeeper(file, new WriterSession(connection));
+            return new SessionKeeper(file, WriterSession.on(file.create()));
         } catch (SQLException e) {
             throw new LedgerOpenException("the ledger has not the tables of its version: " + SqlFaults.reason(e), e);
         }
@@ -30,7 +29,7 @@ final class SessionKeeper {
 
     WriterSession current() throws SQLException {
         if (session.isEmpty()) {
-            session = Optional.of(new WriterSession(file.openWriter()));
+            session = Optional.of(WriterSession.on(file.openWriter()));
         }
         return session.get();
     }

@@ -26,10 +26,20 @@ final class WriterSession implements AutoCloseable {
     private final Statement control;
     private VerdictInserter inserter;
 
-    WriterSession(Connection connection) throws SQLException {
+    private WriterSession(Connection connection) throws SQLException {
         this.connection = connection;
         this.control = connection.createStatement();
         this.inserter = new VerdictInserter(connection);
+    }
+
+    /** Takes the connection over, and closes it if the statements do not fit its tables. */
+    static WriterSession on(Connection connection) throws SQLException {
+        try {
+            return new WriterSession(connection);
+        } catch (SQLException e) {
+            connection.close();
+            throw e;
+        }
     }
 
     Connection connection() {
