@@ -1,6 +1,7 @@
 package org.laddergate.app;
 
-import io.micrometer.core.instrument.DistributionSummary;
+import io.micrometer.core.instrument.FunctionCounter;
+import io.micrometer.core.instrument.FunctionTimer;
 import io.micrometer.core.instrument.Gauge;
 import io.micrometer.core.instrument.Timer;
 import io.micrometer.prometheusmetrics.PrometheusConfig;
@@ -34,6 +35,7 @@ class Wiring implements AutoCloseable {
     private final Settings settings;
     private final Clock clock = Clock.systemUTC();
     private final PrometheusMeterRegistry registry = new PrometheusMeterRegistry(PrometheusConfig.DEFAULT);
+    private Optional<ProductStore> products = Optional.empty();
     private Optional<SqliteLedger> ledger = Optional.empty();
     private volatile boolean warming;
 
@@ -55,7 +57,10 @@ class Wiring implements AutoCloseable {
 
     /** Product definitions in the limits folder. */
     ProductStore products() {
-        return new ProductFiles(settings.limits());
+        if (products.isEmpty()) {
+            products = Optional.of(new ProductFiles(settings.limits()));
+        }
+        return products.get();
     }
 
     /** Limit sets in the limits folder. */
@@ -75,13 +80,14 @@ class Wiring implements AutoCloseable {
 
     /** Stored verdicts in the data folder. */
     VerdictLedger ledger() {
-        Timer commits = Timer.builder("laddergate.commit.duration").publishPercentileHistogram().register(registry);
-        DistributionSummary sizes = DistributionSummary.builder("laddergate.commit.verdicts").register(registry);
-        SqliteLedger opened = SqliteLedger.open(settings.data(), clock, (verdicts, nanos) -> {
-            commits.record(nanos, TimeUnit.NANOSECONDS);
-            sizes.record(verdicts);
-        });
-        Gauge.builder("laddergate.commit.queue", opened, SqliteLedger::queueLength).register(registry);
+        SqliteLedger opened = SqliteLedger.open(settings.data(), clock);
+        FunctionTimer.builder("laddergate.commit.duration", opened, l -> l.statistics().commits(),
+                l -> l.statistics().totalCommitNanos(), TimeUnit.NANOSECONDS).register(registry);
+        FunctionCounter.builder("laddergate.commit.verdicts", opened, l -> l.statistics().storedVerdicts())
+                .register(registry);
+        FunctionCounter.builder("laddergate.commit.failures", opened, l -> l.statistics().failedBatches())
+                .register(registry);
+        Gauge.builder("laddergate.commit.queue", opened, l -> l.statistics().queueDepth()).register(registry);
         ledger = Optional.of(opened);
         return opened;
     }
@@ -129,8 +135,7 @@ class Wiring implements AutoCloseable {
     final Services services() {
         ProductStore products = products();
         LimitStore limits = limits();
-        GoldenStore goldenUnits = new GoldenFolder(settings.goldenUnits(), products,
-                new CurveRules(settings.http().maximumSamples(), clock));
+        GoldenStore goldenUnits = goldenUnits();
         LimitLearning learning = learning();
         VerdictLedger verdicts = ledger();
         return new Services(products, limits, goldenUnits, learning, desk(products, limits, verdicts), verdicts, clock,
