@@ -14,6 +14,8 @@ import java.util.Locale;
 public final class CurveChecks {
     /** Share of fine bins that must hold samples. */
     static final double FILLED_SHARE = 0.5;
+    /** Longest stretch of the time axis without a sample [decades]. */
+    static final double LONGEST_GAP_DECADES = 0.25;
     /** Drop below this share of golden is no heating. A fault only ever makes the drop larger. */
     static final double SMALLEST_DROP_SHARE = 0.2;
     /** Noise ratio that is too much, and the one at which the sensor line must be open. */
@@ -21,6 +23,7 @@ public final class CurveChecks {
     static final double OPEN_NOISE_RATIO = 40;
     /** A single bin off its neighbours by this many sigma is a spike. */
     static final double SPIKE_SIGMAS = 12;
+    private static final int LOCAL_BINS = 12;
     /** Step between neighbouring bins, as a share of the golden drop, that heat cannot make. */
     static final double LARGEST_STEP_SHARE = 0.4;
 
@@ -74,13 +77,31 @@ public final class CurveChecks {
         return found;
     }
 
+    /** Checks that no long stretch between the samples had to be bridged. */
+    public List<Finding> gaps(int[] counts, int binsPerDecade) {
+        List<Finding> found = new ArrayList<>(0);
+        int bound = (int) Math.max(3, LONGEST_GAP_DECADES * binsPerDecade);
+        int run = 0;
+        int longest = 0;
+        for (int count : counts) {
+            run = count == 0 ? run + 1 : 0;
+            longest = Math.max(longest, run);
+        }
+        if (longest > bound) {
+            add(found, InvalidReason.TOO_FEW_SAMPLES, "There is no sample for %.0f time bins in a row (at most %.0f).", longest,
+                    bound, longest, bound);
+        }
+        return found;
+    }
+
     /**
      * Checks that the curve moves like heat.
      *
      * @param binned     complete binned curve [K]
+     * @param counts     samples in each bin; bridged bins cannot show a spike
      * @param noiseRatio noise of the curve in units of the golden noise
      */
-    public List<Finding> signal(double[] binned, double noiseRatio) {
+    public List<Finding> signal(double[] binned, int[] counts, double noiseRatio) {
         List<Finding> found = new ArrayList<>(0);
         double drop = binned[0] - binned[binned.length - 1];
         double step = largestStep(binned);
@@ -107,7 +128,7 @@ public final class CurveChecks {
             plateau(binned, found);
         }
         if (found.isEmpty()) {
-            spikes(binned, noiseRatio, found);
+            spikes(binned, counts, noiseRatio, found);
         }
         if (found.isEmpty()) {
             noise(noiseRatio, found);
@@ -147,13 +168,15 @@ public final class CurveChecks {
         }
     }
 
-    private void spikes(double[] binned, double noiseRatio, List<Finding> found) {
+    private void spikes(double[] binned, int[] counts, double noiseRatio, List<Finding> found) {
         int spikes = 0;
         double worst = 0;
         for (int i = 1; i + 2 < binned.length; i++) {
             double e = spikeSigmas(binned, i) / Math.max(1, noiseRatio);
-            if (e > SPIKE_SIGMAS) {
-                spikes++;
+            boolean sampled = counts[i - 1] > 0 && counts[i] > 0 && counts[i + 1] > 0 && counts[i + 2] > 0;
+            if (sampled && e > SPIKE_SIGMAS) {
+                e = spikeSigmas(binned, i) / Math.max(1, localNoiseRatio(binned, i));
+                spikes += e > SPIKE_SIGMAS ? 1 : 0;
                 worst = Math.max(worst, e);
             }
         }
@@ -161,6 +184,18 @@ public final class CurveChecks {
             add(found, InvalidReason.SPIKES, "Single samples stand out of their neighbours by up to %.0f sigma (at most "
                     + "%.0f).", worst, SPIKE_SIGMAS, worst, SPIKE_SIGMAS);
         }
+    }
+
+    /** Noise around a bin in units of the golden noise: a record with few samples early on is noisier there. */
+    private double localNoiseRatio(double[] binned, int at) {
+        int from = Math.max(1, at - LOCAL_BINS);
+        int to = Math.min(binned.length - 2, at + LOCAL_BINS);
+        double[] around = new double[to - from];
+        for (int i = from; i < to; i++) {
+            around[i - from] = spikeSigmas(binned, i);
+        }
+        java.util.Arrays.sort(around);
+        return around[around.length / 2] / 0.6745;
     }
 
     /** Third difference of the deviation from golden [sigma]: a lone sample off by x sigma gives 3x/sqrt(20). */

@@ -82,7 +82,7 @@ public final class LogTimeBins {
      *
      * @param timesSeconds times [s], strictly increasing, not modified
      * @param values       values, same length, not modified
-     * @param out          value at each bin centre, length {@link #size()}, overwritten; NaN in empty end bins
+     * @param out          value at each bin centre, length {@link #size()}, overwritten; NaN where too many end bins are empty
      * @param counts       samples in each bin, length {@link #size()}, overwritten
      * @return number of bins that hold at least one sample
      */
@@ -156,7 +156,7 @@ public final class LogTimeBins {
         }
     }
 
-    private static void fillGaps(double[] out, int[] counts) {
+    private void fillGaps(double[] out, int[] counts) {
         int previous = -1;
         for (int i = 0; i < counts.length; i++) {
             if (counts[i] > 0) {
@@ -169,6 +169,39 @@ public final class LogTimeBins {
         }
         for (int k = previous + 1; k < counts.length; k++) {
             out[k] = Double.NaN;
+        }
+        continueStart(out, counts);
+        continueEnd(out, counts, previous);
+    }
+
+    private void continueStart(double[] out, int[] counts) {
+        int first = 0;
+        while (first < counts.length && counts[first] == 0) {
+            first++;
+        }
+        // The line spans a third of a decade, so that the noise of single bins is not blown up.
+        int second = first + Math.max(1, perDecade() / 3);
+        if (first == 0 || first > perDecade() / 5 || second >= counts.length || Double.isNaN(out[second])) {
+            return;
+        }
+        double slope = (out[second] - out[first]) / (root(second) - root(first));
+        for (int k = 0; k < first; k++) {
+            out[k] = out[first] + slope * (root(k) - root(first));
+        }
+    }
+
+    private double root(int bin) {
+        return Math.sqrt(centresSeconds[bin]);
+    }
+
+    private void continueEnd(double[] out, int[] counts, int last) {
+        int earlier = last - Math.max(1, perDecade() / 5);
+        if (last == counts.length - 1 || counts.length - 1 - last > perDecade() / 10 || earlier < 0) {
+            return;
+        }
+        double slope = (out[last] - out[earlier]) / (last - earlier);
+        for (int k = last + 1; k < counts.length; k++) {
+            out[k] = out[last] + slope * (k - last);
         }
     }
 }

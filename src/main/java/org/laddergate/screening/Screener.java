@@ -51,11 +51,12 @@ public final class Screener {
             return invalid(findings);
         }
         findings.addAll(plan.checks().coverage(work.binned, filled));
+        findings.addAll(plan.checks().gaps(work.counts, plan.bins().perDecade()));
         if (!findings.isEmpty()) {
             return invalid(findings);
         }
         double noiseRatio = normalise(measurement);
-        findings.addAll(plan.checks().signal(work.fine, noiseRatio));
+        findings.addAll(plan.checks().signal(work.fine, work.counts, noiseRatio));
         if (!findings.isEmpty()) {
             return invalid(findings);
         }

@@ -35,6 +35,11 @@ public final class StructureSolver {
         int rungs = FosterToCauer.computeLadderInto(amplitudes, timeConstants, timeConstants.length, rungR, rungC, ladderWork);
         StructureFunction.cumulateInto(rungR, rungC, rungs, resistances, capacitances);
         points = rungs + 1;
+        // The last thousandth of the resistance belongs to time constants far beyond the record; its capacitance means nothing.
+        double end = 0.999 * resistances[rungs];
+        while (points > 2 && resistances[points - 2] >= end) {
+            points--;
+        }
     }
 
     /** Number of points of the structure function. */

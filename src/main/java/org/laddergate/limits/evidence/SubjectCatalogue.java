@@ -102,9 +102,31 @@ final class SubjectCatalogue {
         all.add(shaped(slight).signature(slight).weight(WEIGHT_THINNER).spread(SIZE_SPREAD)
                 .sizes(-0.15 * unit, -0.3 * unit, -0.6 * unit).bend(MODEL_BEND, MODEL_BEND_LENGTH).build(family));
         all.add(shaped(slight).signature(slight).weight(unknown).spread(SIZE_SPREAD)
-                .sizes(0.125 * unit, 0.25 * unit, 0.5 * unit, unit, 2 * unit, 4 * unit)
+                .sizes(unknownSizes(slight))
                 .bend(UNKNOWN_SHAPE_BEND, UNKNOWN_SHAPE_BEND_LENGTH).build(family));
         return all;
+    }
+
+    /**
+     * Sizes of a fault of unknown shape: from an eighth of the region's resistance to four times; without a layer table, where
+     * a thin region's resistance is known badly, on to a deviation of a third of the golden drop.
+     */
+    private double[] unknownSizes(FaultSignature slight) {
+        double unit = 1 / slight.severity();
+        double largest = 4 * unit;
+        if (!model.fromLayers()) {
+            double peak = 0;
+            for (double d : slight.deviationKelvin()) {
+                peak = Math.max(peak, Math.abs(d - slight.deviationKelvin()[0]));
+            }
+            largest = Math.max(largest, (golden[0] - golden[golden.length - 1]) / 3 / peak);
+        }
+        int steps = (int) Math.ceil(Math.log(largest / (0.125 * unit)) / Math.log(2)) + 1;
+        double[] sizes = new double[steps];
+        for (int k = 0; k < steps; k++) {
+            sizes[k] = 0.125 * unit * Math.pow(2, k);
+        }
+        return sizes;
     }
 
     /** Deviations count from the start of the curve, so that bending cannot start before the fault is seen. */
