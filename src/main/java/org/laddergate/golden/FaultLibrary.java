@@ -17,7 +17,7 @@ import org.laddergate.thermal.FosterNetwork;
 /**
  * Works out with the calibrated conduction model what faults of each region would do to the curve.
  *
- * <p>Method: a region's resistance is raised evenly, and voids of several sizes are put into its weakest layer, at the
+ * <p>Method: a region's resistance is raised evenly, its weakest layer is made thicker, and voids of several sizes are put into its weakest layer, at the
  * axis and at the rim. Each faulty model is compared with a healthy one on the same grid, so that grid errors cancel.
  * The first layer carries the heat source and gets no voids.
  *
@@ -44,7 +44,8 @@ final class FaultLibrary {
         this.bins = bins;
     }
 
-    private record Case(String region, Shape shape, double severity, double[] resistance, Void hole) {}
+    private record Case(String region, Shape shape, double severity, double[] resistance, double[] thickness,
+            Void hole) {}
 
     List<FaultSignature> signatures(List<String> regions) {
         List<Case> cases = new ArrayList<>();
@@ -54,17 +55,22 @@ final class FaultLibrary {
             for (double growth : GROWTHS) {
                 double[] factor = stack.noChange();
                 members.forEach(i -> factor[i] = 1 + growth);
-                cases.add(new Case(region, Shape.UNIFORM, growth, factor, null));
+                cases.add(new Case(region, Shape.UNIFORM, growth, factor, stack.noChange(), null));
             }
             int weakest = members.stream().max(Comparator.comparingDouble(this::resistivity)).orElseThrow();
+            for (double growth : GROWTHS) {
+                double[] factor = stack.noChange();
+                factor[weakest] = 1 + growth;
+                cases.add(new Case(region, Shape.THICKER, growth, stack.noChange(), factor, null));
+            }
             if (weakest > 0) {
                 double radius = stack.radiusMetres(weakest);
                 for (double share : CENTRE_SHARES) {
-                    cases.add(new Case(region, Shape.CENTRE, share, stack.noChange(),
+                    cases.add(new Case(region, Shape.CENTRE, share, stack.noChange(), stack.noChange(),
                             new Void(weakest, 0, radius * Math.sqrt(share))));
                 }
                 for (double share : EDGE_SHARES) {
-                    cases.add(new Case(region, Shape.EDGE, share, stack.noChange(),
+                    cases.add(new Case(region, Shape.EDGE, share, stack.noChange(), stack.noChange(),
                             new Void(weakest, radius * Math.sqrt(1 - share), radius)));
                 }
             }
@@ -106,7 +112,7 @@ final class FaultLibrary {
                 : List.of(new Void(-1, c.hole().innerRadiusMetres(), c.hole().outerRadiusMetres()));
         List<Void> faultyVoids = c.hole() == null ? List.of() : List.of(c.hole());
         FosterNetwork healthy = stack.build(parameters, stack.noChange(), healthyVoids).network();
-        FosterNetwork faulty = stack.build(parameters, c.resistance(), faultyVoids).network();
+        FosterNetwork faulty = stack.build(parameters, c.resistance(), c.thickness(), faultyVoids).network();
         double[] difference = curve(faulty);
         double[] base = curve(healthy);
         for (int i = 0; i < base.length; i++) {

@@ -61,15 +61,25 @@ final class StackModel {
 
     /**
      * @param parameters    see above, not modified
-     * @param resistance    factor on each layer's resistance, 1 for none
+     * @param resistance    factor on each layer's resistivity, 1 for none
      * @param voids         rings of still air
      */
     AxisymmetricStack build(double[] parameters, double[] resistance, List<AxisymmetricStack.Void> voids) {
+        return build(parameters, resistance, noChange(), voids);
+    }
+
+    /**
+     * As {@link #build(double[], double[], List)} with a factor on each layer's thickness.
+     *
+     * @param thickness factor on each layer's thickness, 1 for none
+     */
+    AxisymmetricStack build(double[] parameters, double[] resistance, double[] thickness,
+            List<AxisymmetricStack.Void> voids) {
         int n = layers.size();
         List<StackSlab> slabs = new ArrayList<>();
         for (int i = 0; i < n; i++) {
             Layer l = layers.get(i);
-            slabs.add(new StackSlab(l.thicknessMetres(), radiusMetres(i), l.conductivityWattsPerMetreKelvin(),
+            slabs.add(new StackSlab(l.thicknessMetres() * thickness[i], radiusMetres(i), l.conductivityWattsPerMetreKelvin(),
                     l.heatCapacityJoulesPerCubicMetreKelvin())
                     .scaled(Math.exp(parameters[i]) / resistance[i], Math.exp(parameters[n + i])));
         }

@@ -7,7 +7,7 @@ import java.util.Locale;
  *
  * @param region                        region at fault
  * @param shape                         how the fault is shaped
- * @param severity                      {@link Shape#UNIFORM}: relative growth of the region's resistance; otherwise the
+ * @param severity                      {@link Shape#UNIFORM} and {@link Shape#THICKER}: relative growth; otherwise the
  *                                      fraction of the region's area that is lost [1]
  * @param addedResistanceKelvinPerWatt  steady resistance the fault adds between junction and heat sink [K/W]
  * @param deviationKelvin               faulty minus golden temperature in each comparison bin, relative to an arbitrary
@@ -18,8 +18,10 @@ public record FaultSignature(String region, Shape shape, double severity, double
 
     /** Shape of a fault within its layer. */
     public enum Shape {
-        /** The layer resists more everywhere: thick, or poorly conducting. */
+        /** The layer conducts less everywhere. */
         UNIFORM,
+        /** The layer is thicker everywhere: it resists and stores more. */
+        THICKER,
         /** A disc around the axis is missing. */
         CENTRE,
         /** A ring at the rim is missing. */

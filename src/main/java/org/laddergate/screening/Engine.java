@@ -20,6 +20,8 @@ import org.laddergate.measurement.Measurement;
  * lent to the calling threads, so judging allocates no scratch arrays. Safe for use from many threads.
  */
 public final class Engine implements ScreeningDesk {
+    private static final int WARM_UP_ROUNDS = 600;
+
     private final ProductStore products;
     private final LimitStore limits;
     private final VerdictLedger ledger;
@@ -64,9 +66,19 @@ public final class Engine implements ScreeningDesk {
         }
     }
 
-    /** Works out the plan of a product's released limits, so that the first part does not wait for it. */
+    /**
+     * Works out the plan of a product's released limits and judges its golden curve some hundred times, so that the first
+     * part of a shift waits neither for the plan nor for the compiler.
+     */
     public void warmUp(String product) {
-        limits.released(product).ifPresent(this::crew);
+        limits.released(product).ifPresent(set -> {
+            Crew crew = crew(set);
+            Screener screener = crew.borrow();
+            for (int i = 0; i < WARM_UP_ROUNDS; i++) {
+                screener.judge(GoldenCurve.of(set));
+            }
+            crew.giveBack(screener);
+        });
     }
 
     private LimitSet releasedLimits(String product) {

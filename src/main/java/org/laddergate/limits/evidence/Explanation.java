@@ -25,6 +25,7 @@ import org.laddergate.limits.FaultSignature;
  */
 public final class Explanation {
     private static final double SMALLEST_VARIANCE = 1e-6;
+    private static final double ALLOWED_BENDING = 0.16;
 
     private final Optional<FaultSignature> signature;
     private final double logWeight;
@@ -133,15 +134,17 @@ public final class Explanation {
     }
 
     /**
-     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + b^2 |s s'| o G) [K^2], or
-     * the free covariance.
+     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + 0.16 b^2 |s s'| o G) [K^2].
+     * Once a fault is named its signature is known better than while all were weighed; with the full bending no second fault
+     * could ever be seen behind a large first one.
      */
     public double[][] allowance(double size) {
         int m = shape.length;
         double[][] out = new double[m][m];
         for (int i = 0; i < m; i++) {
             for (int j = 0; j < m; j++) {
-                out[i][j] = size * size * (bending[i][j] + (1 + spread * spread) * shape[i] * shape[j]);
+                out[i][j] = size * size * (ALLOWED_BENDING * bending[i][j]
+                        + (1 + spread * spread) * shape[i] * shape[j]);
             }
         }
         return out;

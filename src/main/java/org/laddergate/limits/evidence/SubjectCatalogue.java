@@ -34,6 +34,7 @@ final class SubjectCatalogue {
     private static final double WEIGHT_UNKNOWN_SHAPE_WITHOUT_LAYERS = 0.6;
     private static final double WEIGHT_THINNER = 0.05;
 
+    private static final double HEATED_LAYER_WEIGHT = 0.1;
     private static final double PRIOR_EACH_MEASUREMENT_ERROR = 2e-4;
     private static final double PRIOR_OTHER_PRODUCT = 2e-4;
     private static final double PRIOR_UNEXPLAINED_OF_FAULTS = 0.05;
@@ -60,8 +61,9 @@ final class SubjectCatalogue {
 
     List<Subject> subjects(List<Region> regions, DecisionSettings settings) {
         List<Subject> all = new ArrayList<>();
-        double each = settings.priorFaultRate() / Math.max(1, regions.size());
+        double weights = regions.stream().mapToDouble(this::priorWeight).sum();
         for (Region region : regions) {
+            double each = settings.priorFaultRate() * priorWeight(region) / weights;
             Subject.Kind kind = region.role() == RegionRole.FIXTURE ? Subject.Kind.FIXTURE_REGION
                     : Subject.Kind.PART_REGION;
             all.add(new Subject(region.name(), kind, Math.log(each), faultsOf(region.name())));
@@ -80,6 +82,20 @@ final class SubjectCatalogue {
         return all;
     }
 
+    /**
+     * Joints go wrong, crystals hardly ever: the region of the heated layer alone, which has no void signatures, gets a tenth
+     * of a joint's prior (common practice, no source).
+     */
+    private double priorWeight(Region region) {
+        boolean joint = !model.fromLayers() || model.signatures().stream()
+                .anyMatch(s -> s.region().equals(region.name()) && !isEven(s));
+        return joint ? 1 : HEATED_LAYER_WEIGHT;
+    }
+
+    private static boolean isEven(FaultSignature s) {
+        return s.shape() == Shape.UNIFORM || s.shape() == Shape.THICKER;
+    }
+
     private static Subject measurement(String code, List<Explanation> explanations) {
         return new Subject(code, Subject.Kind.MEASUREMENT, Math.log(PRIOR_EACH_MEASUREMENT_ERROR), explanations);
     }
@@ -92,7 +108,7 @@ final class SubjectCatalogue {
         List<Explanation> all = new ArrayList<>();
         for (FaultSignature s : own) {
             long alike = own.stream().filter(o -> o.shape() == s.shape()).count();
-            double[] sizes = s.shape() == Shape.UNIFORM ? new double[] {0.5, 1, 2} : new double[] {1};
+            double[] sizes = isEven(s) ? new double[] {0.5, 1, 2} : new double[] {1};
             all.add(shaped(s).signature(s).weight(known / shapes / alike).sizes(sizes).spread(SIZE_SPREAD)
                     .bend(MODEL_BEND, MODEL_BEND_LENGTH).build(family));
         }
@@ -157,7 +173,7 @@ final class SubjectCatalogue {
     private List<Explanation> powerErrors(double span) {
         double[] shape = golden.clone();
         return List.of(new Explanation.Builder(logTimes, shape).spread(0.3).bend(0.02, MODEL_BEND_LENGTH)
-                .sizes(0.01, 0.02, 0.05, 0.1, 0.2, 0.5, -0.01, -0.02, -0.05, -0.1, -0.2, -0.5, -0.9).build(family));
+                .sizes(0.03, 0.05, 0.1, 0.2, 0.5, -0.03, -0.05, -0.1, -0.2, -0.5, -0.9).build(family));
     }
 
     private List<Explanation> timebaseErrors() {
