@@ -24,12 +24,12 @@ class KilledProcessTest {
     @Test
     void everyAcknowledgedVerdict_survivesKills_andNoneIsStoredTwice() throws Exception {
         Map<String, Long> acknowledged = new HashMap<>();
-        for (int answersBeforeTheKill : new int[] {1, 150, 1200, 3000}) {
+        for (int answersBeforeTheKill : new int[] {1, 100, 700}) {
             runAndKill(answersBeforeTheKill, acknowledged);
             long stored = assertAllStored(acknowledged);
             Ledgers.assertGapless(folder, stored);
         }
-        assertTrue(acknowledged.size() > 1000, "only " + acknowledged.size() + " acknowledged");
+        assertTrue(acknowledged.size() > 300, "only " + acknowledged.size() + " acknowledged");
     }
 
     private void runAndKill(int answers, Map<String, Long> acknowledged) throws Exception {
