@@ -35,7 +35,7 @@ final class LedgerWriterCost {
             nanos += System.nanoTime();
             LedgerStatistics after = ledger.statistics();
             double verdicts = after.storedVerdicts() - before.storedVerdicts();
-            System.out.printf("%d under way: %.0f verdicts/s, batch %.1f, writer %.0f us of CPU/verdict, %.1f KiB/verdict%n",
+            System.out.printf("%d under way: %.0f verdicts/s, batch %.1f, writer CPU %.0f us, %.1f KiB/verdict%n",
                     underWay, verdicts / nanos * 1e9, verdicts / (after.commits() - before.commits()),
                     cpuNanos / verdicts / 1e3, Files.size(folder.resolve(LedgerFile.NAME)) / 1024.0 / appends);
         }
