@@ -13,9 +13,9 @@ import org.junit.jupiter.api.io.TempDir;
 import org.laddergate.screening.StoredVerdict;
 
 /**
- * Kills a writing process without warning (SIGKILL where there is one). Shows that what was answered is found by the next
- * process and that a repeat after the crash is recognised. The instant between answer and commit is too short to be
- * hit by a kill: {@link AppendTest} checks that order. A power failure is what synchronous=FULL is for.
+ * Kills a writing process without warning (SIGKILL where there is one). Shows that what was answered is found by the
+ * next process and that a repeat after the crash is recognised. The instant between answer and commit is too short to
+ * be hit by a kill: {@link AppendTest} checks that order. A power failure is what synchronous=FULL is for.
  */
 @Tag("storage")
 class KilledProcessTest {
