@@ -1,6 +1,6 @@
 package org.laddergate.records;
 
-/** The ledger file cannot be used: from a newer version, not a ledger, or not accessible. The service must not start. */
+/** The ledger file is from a newer version, not a ledger, or not accessible; the service must not start. */
 public final class LedgerOpenException extends RuntimeException {
     private static final long serialVersionUID = 1L;
 

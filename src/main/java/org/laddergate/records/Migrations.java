@@ -39,7 +39,7 @@ final class Migrations {
         }
     }
 
-    /** Runs the missing scripts. Two processes may do this at the same time: the version is read under the write lock. */
+    /** Runs the missing scripts. Two processes may do so at once: the version is read under the write lock. */
     static void apply(Connection connection) throws SQLException {
         while (integer(connection, "PRAGMA user_version") < currentVersion()) {
             try (Statement statement = connection.createStatement()) {

@@ -7,13 +7,13 @@ import org.sqlite.SQLiteErrorCode;
 final class SqlFaults {
     private SqlFaults() {}
 
-    /** True if the row itself cannot be stored: the same append would fail on a healthy disk, its neighbours would not. */
+    /** True if the row itself cannot be stored: it would fail on a healthy disk too, its neighbours would not. */
     static boolean liesInTheRow(SQLException e) {
         return is(e, SQLiteErrorCode.SQLITE_CONSTRAINT) || is(e, SQLiteErrorCode.SQLITE_MISMATCH)
                 || is(e, SQLiteErrorCode.SQLITE_TOOBIG) || is(e, SQLiteErrorCode.SQLITE_RANGE);
     }
 
-    /** True if the connection is known to be sound after a rollback; otherwise it is cheaper to open another than to guess. */
+    /** True if the connection is known to be sound after a rollback; otherwise opening another beats guessing. */
     static boolean leavesConnectionSound(SQLException e) {
         return liesInTheRow(e) || is(e, SQLiteErrorCode.SQLITE_BUSY) || is(e, SQLiteErrorCode.SQLITE_FULL);
     }

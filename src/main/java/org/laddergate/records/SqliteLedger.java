@@ -103,7 +103,7 @@ public final class SqliteLedger implements VerdictLedger, AutoCloseable {
         return errand.done();
     }
 
-    /** Stores what is queued, then closes; later appends and look-ups fail as unavailable. Closing twice is harmless. */
+    /** Stores what is queued, then closes; later calls fail as unavailable. Closing twice is harmless. */
     @Override
     public void close() {
         try {

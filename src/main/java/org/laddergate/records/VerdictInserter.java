@@ -13,8 +13,8 @@ import org.laddergate.screening.RegionResult;
 import org.laddergate.screening.StoredVerdict;
 
 /**
- * The append itself, inside a transaction of the writer connection; used by the writer thread only. Sequence and attempt
- * are decided here from what the transaction sees, so a rolled-back append leaves no gap in either.
+ * The append itself, inside a transaction of the writer connection; used by the writer thread only. Sequence and
+ * attempt are decided here from what the transaction sees, so a rolled-back append leaves no gap in either.
  */
 final class VerdictInserter implements AutoCloseable {
     private static final String LAST_SEQUENCE = "SELECT coalesce(max(sequence), 0) FROM verdict";

@@ -7,6 +7,7 @@ import java.util.ArrayList;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Set;
+import java.util.concurrent.CompletableFuture;
 import java.util.concurrent.CompletionStage;
 import java.util.concurrent.CountDownLatch;
 import java.util.concurrent.ExecutorService;
@@ -138,6 +139,16 @@ class AppendTest {
         pool.shutdown();
         assertEquals(1, distinct.size(), "every thread was told the same sequences");
         Ledgers.assertGapless(folder, ids);
+    }
+
+    /** The ledger of these tests answers on the writer thread, so a look-up here happens right at the answer. */
+    @Test
+    void answer_isGivenOnlyWhenOtherConnectionsSeeTheVerdict() throws Exception {
+        CountDownLatch release = Ledgers.holdWriter(ledger);
+        CompletableFuture<Boolean> seen = ledger.append(measurement("1"), SHA_A, judgement)
+                .thenApply(verdict -> ledger.find("1").isPresent()).toCompletableFuture();
+        release.countDown();
+        assertEquals(true, seen.get(30, TimeUnit.SECONDS));
     }
 
     @Test

@@ -13,8 +13,9 @@ import org.junit.jupiter.api.io.TempDir;
 import org.laddergate.screening.StoredVerdict;
 
 /**
- * Kills a writing process without warning (SIGKILL where there is one). Shows that an answer means a commit and that a
- * repeat after the crash is recognised; a power failure is what synchronous=FULL is for and cannot be shown here.
+ * Kills a writing process without warning (SIGKILL where there is one). Shows that what was answered is found by the
+ * next process and that a repeat after the crash is recognised. The instant between answer and commit is too short to
+ * be hit by a kill: {@link AppendTest} checks that order. A power failure is what synchronous=FULL is for.
  */
 @Tag("storage")
 class KilledProcessTest {
@@ -24,12 +25,12 @@ class KilledProcessTest {
     @Test
     void everyAcknowledgedVerdict_survivesKills_andNoneIsStoredTwice() throws Exception {
         Map<String, Long> acknowledged = new HashMap<>();
-        for (int answersBeforeTheKill : new int[] {1, 150, 1200, 3000}) {
+        for (int answersBeforeTheKill : new int[] {1, 100, 700}) {
             runAndKill(answersBeforeTheKill, acknowledged);
             long stored = assertAllStored(acknowledged);
             Ledgers.assertGapless(folder, stored);
         }
-        assertTrue(acknowledged.size() > 1000, "only " + acknowledged.size() + " acknowledged");
+        assertTrue(acknowledged.size() > 300, "only " + acknowledged.size() + " acknowledged");
     }
 
     private void runAndKill(int answers, Map<String, Long> acknowledged) throws Exception {

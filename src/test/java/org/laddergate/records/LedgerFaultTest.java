@@ -175,6 +175,8 @@ class LedgerFaultTest {
         ledger.close();
         CountDownLatch slow = new CountDownLatch(1);
         ledger = SqliteLedger.open(folder, Ledgers.CLOCK);
+        // Held until the receiver is attached: on a completed stage it would run, and wait, in this thread.
+        CountDownLatch release = Ledgers.holdWriter(ledger);
         append().thenAccept(verdict -> {
             try {
                 slow.await();
@@ -182,6 +184,7 @@ class LedgerFaultTest {
                 throw new IllegalStateException(e);
             }
         });
+        release.countDown();
         append();
         Ledgers.waitUntil(() -> ledger.find("m2").isPresent());
         slow.countDown();

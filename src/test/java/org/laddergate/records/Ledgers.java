@@ -90,10 +90,12 @@ final class Ledgers {
     static void assertGapless(Path folder, long expectedVerdicts) throws SQLException {
         try (Connection connection = foreignConnection(folder)) {
             assertEquals(expectedVerdicts, Migrations.integer(connection, "SELECT count(*) FROM verdict"));
-            assertEquals(expectedVerdicts, Migrations.integer(connection, "SELECT coalesce(max(sequence), 0) FROM verdict"));
+            assertEquals(expectedVerdicts,
+                    Migrations.integer(connection, "SELECT coalesce(max(sequence), 0) FROM verdict"));
             assertEquals(expectedVerdicts, Migrations.integer(connection, "SELECT count(*) FROM trace"));
             assertEquals(0, Migrations.integer(connection, """
-                    SELECT count(*) FROM (SELECT 1 FROM verdict GROUP BY product, serial HAVING max(attempt) <> count(*))
+                    SELECT count(*) FROM (
+                        SELECT 1 FROM verdict GROUP BY product, serial HAVING max(attempt) <> count(*))
                     """), "parts with gaps in their attempts");
             assertEquals(0, Migrations.integer(connection, "SELECT count(*) FROM pragma_foreign_key_check"));
             assertEquals(1, Migrations.integer(connection, """
@@ -112,7 +114,8 @@ final class Ledgers {
         assertEquals(bits(expected.binTimesSeconds()), bits(actual.binTimesSeconds()));
         assertEquals(bits(expected.binTemperaturesCelsius()), bits(actual.binTemperaturesCelsius()));
         assertArrayEquals(expected.binCounts(), actual.binCounts());
-        assertEquals(bits(expected.structureResistancesKelvinPerWatt()), bits(actual.structureResistancesKelvinPerWatt()));
+        assertEquals(bits(expected.structureResistancesKelvinPerWatt()),
+                bits(actual.structureResistancesKelvinPerWatt()));
         assertEquals(bits(expected.structureCapacitancesJoulesPerKelvin()),
                 bits(actual.structureCapacitancesJoulesPerKelvin()));
     }

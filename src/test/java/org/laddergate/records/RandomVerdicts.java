@@ -17,7 +17,7 @@ import org.laddergate.screening.Reason;
 import org.laddergate.screening.RegionResult;
 import org.laddergate.screening.Trace;
 
-/** Invented measurements and judgements from a seed: {@code any…} for hostile ones, {@code typical…} for realistic sizes. */
+/** Invented measurements and judgements from a seed: {@code any…} are hostile, {@code typical…} of real size. */
 final class RandomVerdicts {
     private static final List<String> HOSTILE = List.of("", "'); DROP TABLE verdict; --", "\"", "a\0b", "\0", "\n\r\t",
             "µΩ·K/W", "日本語", "\ud83d\udd25", "e\u0301", "\u202eabc", "%s%n", "?", "NULL", "1e999", " x ", "\uffff",
