@@ -220,7 +220,8 @@ final class ConductionGrid {
     /**
      * Elements of a layer. The heated layer starts with about a micrometre at the heated face, a small fraction of the
      * diffusion length at 10 microseconds; interfaces, where heat turns sideways, are finer than the inside. A poor
-     * conductor between good ones carries heat straight through and needs few.
+     * conductor between good ones carries heat straight through and needs few. No layer starts with elements longer than a
+     * quarter of the diffusion length at the time when heat gets there.
      */
     private double[] slices(int index, double refinement) {
         double t = layers.get(index).thicknessMetres();
@@ -228,15 +229,29 @@ final class ConductionGrid {
         boolean bond = index > 0 && index + 1 < layers.size() && t < 3e-4
                 && k < 0.7 * layers.get(index - 1).conductivityWattsPerMetreKelvin()
                 && k < 0.7 * layers.get(index + 1).conductivityWattsPerMetreKelvin();
-        double top = (index == 0 ? 0.006 : bond ? 0.3 : 0.10) * t / refinement;
+        double usual = (index == 0 ? 0.006 : bond ? 0.3 : 0.10) * t;
+        boolean early = index == 0 || arrival(index) < usual;
+        double top = Math.min(usual, arrival(index)) / refinement;
         double bottom = (bond ? 0.3 : 0.14) * t / refinement;
         double[] lines = lines(0, t, top, bottom, 0.3 * t / refinement,
-                (index == 0 ? 0.12 : 0.4) / refinement);
+                (early ? 0.12 : 0.4) / refinement);
         double[] out = new double[lines.length - 1];
         for (int i = 0; i < out.length; i++) {
             out[i] = lines[i + 1] - lines[i];
         }
         return out;
+    }
+
+    private double arrival(int index) {
+        double depth = 0;
+        for (Layer above : layers.subList(0, index)) {
+            depth += above.thicknessMetres() / Math.sqrt(diffusivity(above));
+        }
+        return index == 0 ? Double.MAX_VALUE : 0.25 * depth * Math.sqrt(diffusivity(layers.get(index)));
+    }
+
+    private static double diffusivity(Layer layer) {
+        return layer.conductivityWattsPerMetreKelvin() / layer.heatCapacityJoulesPerCubicMetreKelvin();
     }
 
     /** Lines on all edges; the finer the thinner the layers at that edge, and nowhere coarser than a fourteenth. */

@@ -199,6 +199,7 @@ final class PopulationMaker {
     }
 
     private static String number(double value, int digits) {
-        return new BigDecimal(value).round(new MathContext(digits)).stripTrailingZeros().toString();
+        String text = Double.toString(new BigDecimal(value).round(new MathContext(digits)).doubleValue());
+        return text.endsWith(".0") ? text.substring(0, text.length() - 2) : text;
     }
 }
