@@ -66,9 +66,9 @@ public final class AxisymmetricStack {
         double[] load = new double[n];
         for (int i = 0; i < n; i++) {
             double[] image = grid.apply(basis.get(i));
-            load[i] = dot(basis.get(i), source);
+            load[i] = InnerProduct.of(basis.get(i), source);
             for (int j = 0; j <= i; j++) {
-                reduced[i][j] = dot(basis.get(j), image);
+                reduced[i][j] = InnerProduct.of(basis.get(j), image);
                 reduced[j][i] = reduced[i][j];
             }
         }
@@ -79,9 +79,9 @@ public final class AxisymmetricStack {
         for (int k = 0; k < n; k++) {
             double rate = eigen.getRealEigenvalue(k);
             double[] v = eigen.getEigenvector(k).toArray();
-            double gain = dot(v, load);
+            double gain = InnerProduct.of(v, load);
             double resistance = gain * gain / rate;
-            if (rate > 0 && resistance > 1e-12 * dot(steady, source)) {
+            if (rate > 0 && resistance > 1e-12 * InnerProduct.of(steady, source)) {
                 r[kept] = resistance;
                 tau[kept++] = 1 / rate;
             }
@@ -153,14 +153,6 @@ public final class AxisymmetricStack {
         double sum = 0;
         for (int i = 0; i < a.length; i++) {
             sum += a[i] * b[i] * w[i];
-        }
-        return sum;
-    }
-
-    private static double dot(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
         }
         return sum;
     }

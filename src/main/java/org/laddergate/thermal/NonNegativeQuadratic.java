@@ -64,11 +64,7 @@ final class NonNegativeQuadratic {
     int minimiseInto(double[] f, double[] x, Workspace w) {
         double scale = 0;
         for (int i = 0; i < size; i++) {
-            double sum = 0;
-            double[] row = inverse[i];
-            for (int j = 0; j < size; j++) {
-                sum += row[j] * f[j];
-            }
+            double sum = InnerProduct.of(inverse[i], f);
             w.free[i] = sum;
             w.held[i] = probable[i];
             scale = Math.max(scale, Math.abs(sum));

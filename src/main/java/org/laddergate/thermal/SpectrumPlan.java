@@ -79,7 +79,7 @@ public final class SpectrumPlan {
         double[][] h = new double[n][n];
         for (int j = 0; j < n; j++) {
             for (int k = 0; k <= j; k++) {
-                h[j][k] = dot(reduced[j], reduced[k]);
+                h[j][k] = InnerProduct.of(reduced[j], reduced[k]);
                 h[k][j] = h[j][k];
             }
         }
@@ -202,7 +202,7 @@ public final class SpectrumPlan {
             line[i] = weights[i] * times[i];
         }
         normalise(one);
-        double c = dot(one, line);
+        double c = InnerProduct.of(one, line);
         for (int i = 0; i < m; i++) {
             line[i] -= c * one[i];
         }
@@ -211,7 +211,7 @@ public final class SpectrumPlan {
     }
 
     private static void normalise(double[] v) {
-        double norm = Math.sqrt(dot(v, v));
+        double norm = Math.sqrt(InnerProduct.of(v, v));
         for (int i = 0; i < v.length; i++) {
             v[i] /= norm;
         }
@@ -219,19 +219,11 @@ public final class SpectrumPlan {
 
     private void removeLine(double[] row) {
         for (double[] d : freeDirections) {
-            double c = dot(row, d);
+            double c = InnerProduct.of(row, d);
             for (int i = 0; i < row.length; i++) {
                 row[i] -= c * d[i];
             }
         }
-    }
-
-    private static double dot(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
-        }
-        return sum;
     }
 
     /** Scratch arrays of one caller. */
@@ -270,7 +262,7 @@ public final class SpectrumPlan {
      */
     public int solveInto(double[] temperatures, double[] out, Workspace work) {
         for (int j = 0; j < tau.length; j++) {
-            work.linear[j] = dot(reduced[j], temperatures) + pull[j];
+            work.linear[j] = InnerProduct.of(reduced[j], temperatures) + pull[j];
         }
         int rounds = quadratic.minimiseInto(work.linear, work.x, work.inner);
         for (int j = 0; j < tau.length; j++) {
@@ -290,6 +282,6 @@ public final class SpectrumPlan {
             r[i] *= weights[i];
         }
         removeLine(r);
-        return Math.sqrt(dot(r, r) / r.length);
+        return Math.sqrt(InnerProduct.of(r, r) / r.length);
     }
 }

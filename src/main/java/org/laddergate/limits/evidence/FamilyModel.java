@@ -4,6 +4,7 @@ import org.apache.commons.math3.linear.Array2DRowRealMatrix;
 import org.apache.commons.math3.linear.CholeskyDecomposition;
 import org.apache.commons.math3.linear.LUDecomposition;
 import org.apache.commons.math3.linear.RealMatrix;
+import org.laddergate.thermal.InnerProduct;
 
 /**
  * The golden family as a normal distribution of deviations from the golden mean, in comparison bins.
@@ -154,12 +155,7 @@ public final class FamilyModel {
      */
     public void whitenInto(double[] deviationKelvin, double[] out) {
         for (int i = 0; i < out.length; i++) {
-            double[] row = whitening[i];
-            double sum = 0;
-            for (int j = 0; j < row.length; j++) {
-                sum += row[j] * deviationKelvin[j];
-            }
-            out[i] = sum;
+            out[i] = InnerProduct.of(whitening[i], deviationKelvin);
         }
     }
 
