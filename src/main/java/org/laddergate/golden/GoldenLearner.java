@@ -65,6 +65,7 @@ public final class GoldenLearner implements LimitLearning {
                 leaveOneOut.bend(), inFamilyLimit, Double.POSITIVE_INFINITY, faults.networkResistances(), faults.networkTimeConstants(),
                 faults.signatures(), spread, faults.fromLayers(), new double[0], StructureBand.none());
         GoldenModel complete = StructureBand.addTo(model, recipe, curves, product.settings());
+        remarks.add(StructureBand.remark(complete, recipe));
         complete = ShapeLimit.addTo(complete, recipe, judged(limits), product.settings(), curves.units());
         return new LimitSet(product.name(), 0, LimitState.DRAFT, "", clock.instant(), recipe, product.settings(),
                 curves.units(), limits, complete, remarks);

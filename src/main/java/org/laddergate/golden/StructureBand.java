@@ -2,6 +2,7 @@ package org.laddergate.golden;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Locale;
 import org.laddergate.limits.DecisionSettings;
 import org.laddergate.limits.Envelope;
 import org.laddergate.limits.GoldenModel;
@@ -9,6 +10,7 @@ import org.laddergate.limits.StructurePlans;
 import org.laddergate.measurement.Recipe;
 import org.laddergate.thermal.SpectrumSearch;
 import org.laddergate.thermal.StructureSolver;
+import org.laddergate.thermal.StructureUncertainty;
 
 /**
  * Golden spectrum and the band that holds the golden family's structure functions.
@@ -51,6 +53,16 @@ final class StructureBand {
             }
         }
         return model.withStructure(golden.amplitudes(), band(capacitances, resistance, settings));
+    }
+
+    /** How well one part's structure function is read, for the remarks of a limit set. */
+    static String remark(GoldenModel model, Recipe recipe) {
+        double[] c = model.envelope().capacitancesJoulesPerKelvin();
+        double to = c[c.length / 2];
+        double u = StructureUncertainty.between(StructurePlans.of(model, recipe), model.goldenKelvin(), model.noiseKelvin(), 0,
+                to);
+        return String.format(Locale.ROOT, "From the junction to %.3g J/K one part's structure function is read with a standard "
+                + "uncertainty of %.2g K/W.", to, u);
     }
 
     private static double[] capacitances(double[] r, double[] c) {
