@@ -13,14 +13,14 @@ import org.laddergate.thermal.InnerProduct;
 /**
  * Reads one region's excess resistance off a deviation from golden.
  *
- * <p>Definition: R - R_golden = s'S^-1 d / s'S^-1 s with s the deviation of 1 K/W more in the region and S the covariance
- * of everything else: noise, power, drift, and the spread of all other directions in the golden family; its variance is
- * 1 / s'S^-1 s. An offset of the curve is free.
+ * <p>Definition: R - R_golden = s'S^-1 d / s'S^-1 s with s the deviation of 1 K/W more in the region and S the
+ * covariance of everything else: noise, power, drift, and the spread of all other directions in the golden family; its
+ * variance is 1 / s'S^-1 s. An offset of the curve is free.
  *
  * <p>Source: generalised least squares (Aitken, Proc. R. Soc. Edinburgh 55 (1935) 42).
  *
- * <p>Why not the family's own covariance: the family varies in the region's own direction too, only not exactly along s;
- * weighting with its inverse looks at nothing but that small difference and reads half the truth.
+ * <p>Why not the family's own covariance: the family varies in the region's own direction too, only not exactly along
+ * s; weighting with its inverse looks at nothing but that small difference and reads half the truth.
  *
  * <p>Cost: one product of length m for a reading. Immutable.
  */

@@ -8,11 +8,12 @@ import org.apache.commons.math3.linear.SingularMatrixException;
 /**
  * Junction temperature at the power step itself, which no sensor can see behind the switching transient.
  *
- * <p>Definition: early heat flow from an evenly heated face follows T(t) = T0 - b sqrt(t), b = 2 P/(A sqrt(pi k rho c)); the next
- * term is linear in t. T0, b and the linear term are fitted to the first part of the record, up to six times its first time.
+ * <p>Definition: early heat flow from an evenly heated face follows T(t) = T0 - b sqrt(t), b = 2 P/(A sqrt(pi k rho
+ * c)); the next term is linear in t. T0, b and the linear term are fitted to the first part of the record, up to six
+ * times its first time.
  *
- * <p>Source: Carslaw and Jaeger, Conduction of Heat in Solids (1959), section 2.9; JESD51-14 corrects the early transient by the
- * same law.
+ * <p>Source: Carslaw and Jaeger, Conduction of Heat in Solids (1959), section 2.9; JESD51-14 corrects the early
+ * transient by the same law.
  *
  * <p>Domain: times ascending from the cut time on; valid while the heat is inside the first layer, t below about
  * d^2 rho c/(2 k).
@@ -56,8 +57,8 @@ public final class SquareRootStart {
             }
         }
         try {
-            return new QRDecomposition(new Array2DRowRealMatrix(x, false)).getSolver().solve(new ArrayRealVector(y, false))
-                    .getEntry(0);
+            return new QRDecomposition(new Array2DRowRealMatrix(x, false)).getSolver()
+                    .solve(new ArrayRealVector(y, false)).getEntry(0);
         } catch (SingularMatrixException e) {
             return Double.NaN;
         }

@@ -5,9 +5,10 @@ import java.util.Random;
 /**
  * How far a structure function read off one curve may be from the truth.
  *
- * <p>Definition: u^2 = s^2 + (0.015 r)^2, s the scatter of the reading under the curve's noise, found by adding simulated noise to
- * a clean curve, r the reading: the part of the path between two capacitances. The second term is what a finite number of time
- * constants leaves; it is the bias found on exact curves (StructureSolverTest), not learnt from the product.
+ * <p>Definition: u^2 = s^2 + (0.015 r)^2, s the scatter of the reading under the curve's noise, found by adding
+ * simulated noise to a clean curve, r the reading: the part of the path between two capacitances. The second term is
+ * what a finite number of time constants leaves; it is the bias found on exact curves (StructureSolverTest), not
+ * learnt from the product.
  *
  * <p>Domain: readings between steep stretches; inside a vertical step of the structure function no figure holds.
  *

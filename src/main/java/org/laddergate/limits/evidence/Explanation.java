@@ -10,18 +10,20 @@ import org.laddergate.thermal.InnerProduct;
 /**
  * One way to explain a deviation from the golden family: a signature of uncertain size whose later shape may bend.
  *
- * <p>Definition: d ~ N(a s, S0 + a^2 (v^2 s s' + b^2 |s s'| o G)), o the element-wise product,
- * G(t,t') = exp(-(ln t - ln t')^2 / (2 l^2)): size a (1 +- v) times the signature s, with a smooth relative error b of
- * correlation length l in ln t. Where s is still zero nothing may happen: heat cannot report a fault before it gets there.
- * The evidence is the mean over a short list of sizes a of the likelihood ratio to the family N(0, S0).
+ * <p>Definition: d ~ N(a s, S0 + a^2 (v^2 s s' + b^2 |s s'| o G)), o the element-wise product, G(t,t') = exp(-(ln t -
+ * ln t')^2 / (2 l^2)): size a (1 +- v) times the signature s, with a smooth relative error b of correlation length l
+ * in ln t. Where s is still zero nothing may happen: heat cannot report a fault before it gets there. The evidence is
+ * the mean over a short list of sizes a of the likelihood ratio to the family N(0, S0).
  *
- * <p>Method: in whitened coordinates K = v^2 s s' + b^2 |s s'| o G has the eigenpairs (l_i, u_i); with y = U'z, c = U's,
- * ln L(a) = a s'z - a^2 s's/2 + sum (q/(1+q)) (y - a c)^2 / 2 - sum ln(1+q) / 2, q = a^2 l. All but y and s'z is prepared.
+ * <p>Method: in whitened coordinates K = v^2 s s' + b^2 |s s'| o G has the eigenpairs (l_i, u_i); with y = U'z, c =
+ * U's, ln L(a) = a s'z - a^2 s's/2 + sum (q/(1+q)) (y - a c)^2 / 2 - sum ln(1+q) / 2, q = a^2 l. All but y and s'z is
+ * prepared.
  *
- * <p>Source: Gaussian likelihood ratio with the matrix inversion and determinant lemmas; the causal bending kernel is our
- * own and described in docs/numerics.md.
+ * <p>Source: Gaussian likelihood ratio with the matrix inversion and determinant lemmas; the causal bending kernel is
+ * our own and described in docs/numerics.md.
  *
- * <p>Error: directions whose variance is below 1e-6 of the family's are dropped, which changes ln L by less than 1e-6 z^2.
+ * <p>Error: directions whose variance is below 1e-6 of the family's are dropped, which changes ln L by less than 1e-6
+ * z^2.
  *
  * <p>Cost: rank times (m - 1) multiplications plus sizes times rank, no allocation. Immutable.
  */
@@ -139,9 +141,9 @@ public final class Explanation {
     }
 
     /**
-     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + 0.16 b^2 |s s'| o G) [K^2].
-     * Once a fault is named its signature is known better than while all were weighed; with the full bending no second fault
-     * could ever be seen behind a large first one.
+     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + 0.16 b^2 |s s'| o G)
+     * [K^2]. Once a fault is named its signature is known better than while all were weighed; with the full bending no
+     * second fault could ever be seen behind a large first one.
      *
      * @return covariance in the coordinates of {@link FamilyModel#contrasts}, (m - 1) by (m - 1)
      */
@@ -157,7 +159,10 @@ public final class Explanation {
         return out;
     }
 
-    /** Generalised least squares size of the signature in a deviation, in units of the signature; 1 for a free explanation [1]. */
+    /**
+     * Generalised least squares size of the signature in a deviation, in units of the signature; 1 for a free
+     * explanation [1].
+     */
     public double size(double[] whitened) {
         return shapeSquared > 0 ? InnerProduct.of(whitenedShape, whitened) / shapeSquared : 1;
     }
