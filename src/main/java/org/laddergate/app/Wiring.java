@@ -70,7 +70,8 @@ class Wiring implements AutoCloseable {
 
     /** Golden units in their folder. */
     GoldenStore goldenUnits() {
-        return new GoldenFolder(settings.goldenUnits(), products(), new CurveRules(settings.http().maximumSamples(), clock));
+        return new GoldenFolder(settings.goldenUnits(), products(),
+                new CurveRules(settings.http().maximumSamples(), clock));
     }
 
     /** Learns limits. */

@@ -31,7 +31,8 @@ public final class DemoFolders {
             GoldenFolder folder = new GoldenFolder(goldenUnits, products,
                     new CurveRules(CurveRules.DEFAULT_MAXIMUM_SAMPLES, clock));
             units(demo, folder);
-            LimitSet draft = limitFiles.saveDraft(new GoldenLearner(clock).learn(demo.product(), folder.units(demo.name())));
+            LimitSet draft = limitFiles.saveDraft(
+                    new GoldenLearner(clock).learn(demo.product(), folder.units(demo.name())));
             limitFiles.release(demo.name(), draft.revision(), "demo", "first limits of an invented product");
         }
     }

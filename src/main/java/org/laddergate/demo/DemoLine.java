@@ -25,8 +25,8 @@ import org.laddergate.measurement.Measurement;
 import org.laddergate.measurement.Submission;
 
 /**
- * A simulated production line: draws invented parts, some with a known fault, posts their curves over HTTP like a tester and
- * compares truth with verdict.
+ * A simulated production line: draws invented parts, some with a known fault, posts their curves over HTTP like a
+ * tester and compares truth with verdict.
  */
 public final class DemoLine {
     private static final double FAULTY_SHARE = 0.2;

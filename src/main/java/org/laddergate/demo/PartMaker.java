@@ -14,8 +14,8 @@ import org.laddergate.thermal.AxisymmetricStack;
 import org.laddergate.thermal.StackSlab;
 
 /**
- * Draws invented parts of a product and what a tester would record of them: conduction in two dimensions, spread from part
- * to part, noise, the switching transient of the first microseconds and a slow drift of the cold plate.
+ * Draws invented parts of a product and what a tester would record of them: conduction in two dimensions, spread from
+ * part to part, noise, the switching transient of the first microseconds and a slow drift of the cold plate.
  *
  * <p>Deterministic for a seed. Not thread-safe.
  */

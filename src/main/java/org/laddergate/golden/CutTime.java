@@ -8,8 +8,8 @@ import org.laddergate.measurement.SampledCurve;
  * Finds from when on the golden curves are thermal.
  *
  * <p>Definition: early heat flow out of an evenly heated face follows T = T0 - b sqrt(t) with a slow correction; an
- * electrical switching transient does not. The cut time is the first bin from which on the mean golden curve over the next
- * eightfold of time agrees with T0 - b sqrt(t) + c t within its own noise.
+ * electrical switching transient does not. The cut time is the first bin from which on the mean golden curve over the
+ * next eightfold of time agrees with T0 - b sqrt(t) + c t within its own noise.
  *
  * <p>Source: square-root law, Carslaw and Jaeger, Conduction of Heat in Solids (1959), section 2.9; used for the early
  * transient in JESD51-14.

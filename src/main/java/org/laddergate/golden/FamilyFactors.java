@@ -12,9 +12,9 @@ import org.laddergate.limits.evidence.FamilyModel;
 /**
  * Leading factors of how golden units differ, beyond their noise.
  *
- * <p>Definition: in coordinates whitened by noise and power uncertainty alone, the sample covariance of the deviations has
- * eigenvalues l_i; those above the bulk that pure noise of n units in m dimensions would give are factors, with variance
- * (l_i - 1)(n + 1)/n: the mean is itself estimated from n units.
+ * <p>Definition: in coordinates whitened by noise and power uncertainty alone, the sample covariance of the deviations
+ * has eigenvalues l_i; those above the bulk that pure noise of n units in m dimensions would give are factors, with
+ * variance (l_i - 1)(n + 1)/n: the mean is itself estimated from n units.
  *
  * <p>Source: probabilistic principal components, Tipping and Bishop (1999); edge of the noise bulk (1 + sqrt(m/n))^2,
  * Marchenko and Pastur (1967).

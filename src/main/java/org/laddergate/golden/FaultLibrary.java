@@ -17,12 +17,12 @@ import org.laddergate.thermal.FosterNetwork;
 /**
  * Works out with the calibrated conduction model what faults of each region would do to the curve.
  *
- * <p>Method: a region's resistance is raised evenly, its weakest layer is made thicker, and voids of several sizes are put into its weakest layer, at the
- * axis and at the rim. Each faulty model is compared with a healthy one on the same grid, so that grid errors cancel.
- * The first layer carries the heat source and gets no voids.
+ * <p>Method: a region's resistance is raised evenly, its weakest layer is made thicker, and voids of several sizes are
+ * put into its weakest layer, at the axis and at the rim. Each faulty model is compared with a healthy one on the same
+ * grid, so that grid errors cancel. The first layer carries the heat source and gets no voids.
  *
- * <p>Why: a void bends the heat's path, and its curve is no multiple of that of a thicker layer; with thick layers alone
- * most voids were put down to the wrong neighbour. Figures in docs/decisions/0002-fault-signatures.md.
+ * <p>Why: a void bends the heat's path, and its curve is no multiple of that of a thicker layer; with thick layers
+ * alone most voids were put down to the wrong neighbour. Figures in docs/decisions/0002-fault-signatures.md.
  */
 final class FaultLibrary {
     private static final double SMALL = 0.02;

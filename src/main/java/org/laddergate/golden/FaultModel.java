@@ -1,6 +1,5 @@
 package org.laddergate.golden;
 
-import java.util.ArrayList;
 import java.util.List;
 import org.laddergate.limits.FaultSignature;
 import org.laddergate.limits.Product;
@@ -19,8 +18,9 @@ import org.laddergate.limits.SpreadDirection;
  * @param fromLayers            whether a conduction model stands behind it
  * @param remarks               notes for people
  */
-record FaultModel(List<Region> regions, double[] goldenResistances, List<FaultSignature> signatures, List<SpreadDirection> spread,
-        double[] networkResistances, double[] networkTimeConstants, boolean fromLayers, List<String> remarks) {
+record FaultModel(List<Region> regions, double[] goldenResistances, List<FaultSignature> signatures,
+        List<SpreadDirection> spread, double[] networkResistances, double[] networkTimeConstants, boolean fromLayers,
+        List<String> remarks) {
 
     static FaultModel of(Product product, GoldenCurves curves) {
         return product.layers().isEmpty() ? LadderFaultModel.of(product, curves) : LayerFaultModel.of(product, curves);

@@ -157,7 +157,8 @@ final class GoldenCurves {
         List<InputFault> faults = new ArrayList<>();
         for (int u = 0; u < n; u++) {
             if (worst[u] > BROKEN) {
-                faults.add(new InputFault("/goldenUnits/" + units.get(u).measurement().measurementId(), "unlike_the_others",
+                faults.add(new InputFault("/goldenUnits/" + units.get(u).measurement().measurementId(),
+                        "unlike_the_others",
                         "golden unit " + units.get(u).measurement().measurementId() + " is " + Math.round(worst[u])
                                 + " robust spreads from the median curve (at most " + BROKEN
                                 + "): a broken measurement or another product"));

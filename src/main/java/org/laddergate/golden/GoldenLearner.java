@@ -17,19 +17,19 @@ import org.laddergate.limits.evidence.FamilyModel;
 import org.laddergate.measurement.Recipe;
 
 /**
- * Learns a limit set from golden units: what healthy parts look like, how they differ, what faults would do, and how far
- * out a healthy part may lie.
+ * Learns a limit set from golden units: what healthy parts look like, how they differ, what faults would do, and how
+ * far out a healthy part may lie.
  *
- * <p>Limits on a region's resistance are a two-sided normal tolerance interval from the golden units, each judged against
- * the others. Content and confidence are promised for the part: with k judged regions each gets the content
- * 1 - (1 - content)/k (Bonferroni), so that a healthy part is inside all of them.
+ * <p>Limits on a region's resistance are a two-sided normal tolerance interval from the golden units, each judged
+ * against the others. Content and confidence are promised for the part: with k judged regions each gets the content 1
+ * - (1 - content)/k (Bonferroni), so that a healthy part is inside all of them.
  *
  * <p>Thread-safe.
  */
 public final class GoldenLearner implements LimitLearning {
     /**
-     * Share of the false-reject risk spent on T-squared. It is small because T-squared names nothing: what it alone finds is
-     * atypical rather than faulty.
+     * Share of the false-reject risk spent on T-squared. It is small because T-squared names nothing: what it alone
+     * finds is atypical rather than faulty.
      */
     private static final double IN_FAMILY_SHARE = 0.1;
 
@@ -59,12 +59,15 @@ public final class GoldenLearner implements LimitLearning {
         List<SpreadDirection> spread = OwnSpread.learn(directions(faults, curves), factors, curves.comparisonNoise());
         double[][] base = FamilyModel.base(curves.comparisonNoise(), mean, logTimes);
         List<RegionLimit> limits = RegionLimits.learn(product.settings(), faults, spread, base, curves);
-        double inFamilyLimit = inFamilyLimit(leaveOneOut.tSquared(), product.settings().falseRejectRisk() * IN_FAMILY_SHARE);
+        double inFamilyLimit = inFamilyLimit(leaveOneOut.tSquared(),
+                product.settings().falseRejectRisk() * IN_FAMILY_SHARE);
         GoldenModel model = new GoldenModel(curves.bins().firstEdgeSeconds(), curves.bins().lastEdgeSeconds(),
                 curves.bins().perDecade(), curves.mean(), curves.noise(), curves.comparisonNoise(), factors,
-                leaveOneOut.bend(), inFamilyLimit, Double.POSITIVE_INFINITY, faults.networkResistances(), faults.networkTimeConstants(),
-                faults.signatures(), spread, faults.fromLayers(), new double[0], StructureBand.none());
+                leaveOneOut.bend(), inFamilyLimit, Double.POSITIVE_INFINITY, faults.networkResistances(),
+                faults.networkTimeConstants(), faults.signatures(), spread, faults.fromLayers(), new double[0],
+                StructureBand.none());
         GoldenModel complete = StructureBand.addTo(model, recipe, curves, product.settings());
+        remarks.add(StructureBand.remark(complete, recipe));
         complete = ShapeLimit.addTo(complete, recipe, judged(limits), product.settings(), curves.units());
         return new LimitSet(product.name(), 0, LimitState.DRAFT, "", clock.instant(), recipe, product.settings(),
                 curves.units(), limits, complete, remarks);

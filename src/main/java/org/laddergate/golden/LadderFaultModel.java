@@ -15,10 +15,11 @@ import org.laddergate.thermal.FosterToCauer;
 import org.laddergate.thermal.SpectrumSearch;
 
 /**
- * The heat path of a product without a layer table: the golden ladder, cut into regions at given cumulative capacitances.
+ * The heat path of a product without a layer table: the golden ladder, cut into regions at given cumulative
+ * capacitances.
  *
- * <p>A region's resistance is scaled in the ladder and the ladder's response compared with the golden one. Voids have no
- * signature here; faults of unknown shape get the larger share of the prior instead.
+ * <p>A region's resistance is scaled in the ladder and the ladder's response compared with the golden one. Voids have
+ * no signature here; faults of unknown shape get the larger share of the prior instead.
  */
 final class LadderFaultModel {
     private static final double[] GROWTHS = {0.25, 1, 4};

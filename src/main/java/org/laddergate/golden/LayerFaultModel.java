@@ -51,8 +51,8 @@ final class LayerFaultModel {
             remarks.add("The layer table does not describe the golden curve well: check thicknesses, areas and materials; "
                     + "named regions may be wrong.");
         }
-        return new FaultModel(List.copyOf(regions.values()), golden, signatures, library.spread(), healthy.network().resistancesKelvinPerWatt(),
-                healthy.network().timeConstantsSeconds(), true, remarks);
+        return new FaultModel(List.copyOf(regions.values()), golden, signatures, library.spread(),
+                healthy.network().resistancesKelvinPerWatt(), healthy.network().timeConstantsSeconds(), true, remarks);
     }
 
     /** Capacitance intervals of the regions by the 45 degree spreading rule (common practice, no source). */

@@ -7,14 +7,14 @@ import org.laddergate.limits.SpreadDirection;
 /**
  * How much of the family's spread each direction is responsible for.
  *
- * <p>Definition: non-negative v_p with sum_p v_p s_p s_p' closest, in the noise-weighted Frobenius norm, to the covariance
- * spanned by the family factors; s_p is the deviation of one unit in direction p.
+ * <p>Definition: non-negative v_p with sum_p v_p s_p s_p' closest, in the noise-weighted Frobenius norm, to the
+ * covariance spanned by the family factors; s_p is the deviation of one unit in direction p.
  *
- * <p>Method: coordinate descent on the non-negative quadratic form, which converges for any positive semidefinite matrix;
- * directions that look alike share the spread in one of the equally good ways.
+ * <p>Method: coordinate descent on the non-negative quadratic form, which converges for any positive semidefinite
+ * matrix; directions that look alike share the spread in one of the equally good ways.
  *
- * <p>Why: a region's reading scatters by its own spread and by what noise and all other directions leave in it; only the
- * latter is measurement uncertainty.
+ * <p>Why: a region's reading scatters by its own spread and by what noise and all other directions leave in it; only
+ * the latter is measurement uncertainty.
  */
 final class OwnSpread {
     private static final int SWEEPS = 2000;

@@ -16,11 +16,11 @@ import org.laddergate.measurement.Recipe;
  * <p>Definition: the (1 - risk) quantile of the log fault-to-family ratio over simulated members of the family, but at
  * least ln(1) = 0, since a curve that looks more like the family than like any fault is no reason to reject.
  *
- * <p>Method: 20,000 whitened standard normal vectors with a fixed seed; a Student-t tail with as many degrees of freedom as
- * golden units carry would be the finite-family distribution, so vectors are scaled by sqrt(nu/chi2_nu).
+ * <p>Method: 20,000 whitened standard normal vectors with a fixed seed; a Student-t tail with as many degrees of
+ * freedom as golden units carry would be the finite-family distribution, so vectors are scaled by sqrt(nu/chi2_nu).
  *
- * <p>Source: quantile by simulation; multivariate t as predictive distribution, e.g. Gelman et al., Bayesian Data Analysis,
- * section 3.6.
+ * <p>Source: quantile by simulation; multivariate t as predictive distribution, e.g. Gelman et al., Bayesian Data
+ * Analysis, section 3.6.
  */
 final class ShapeLimit {
     private static final int DRAWS = 20_000;
@@ -28,7 +28,8 @@ final class ShapeLimit {
 
     private ShapeLimit() {}
 
-    static GoldenModel addTo(GoldenModel model, Recipe recipe, List<Region> judged, DecisionSettings settings, int units) {
+    static GoldenModel addTo(GoldenModel model, Recipe recipe, List<Region> judged, DecisionSettings settings,
+            int units) {
         EvidenceModel evidence = EvidenceModel.of(model, recipe, judged, settings);
         int freedom = evidence.family().freedom();
         int chunks = 20;

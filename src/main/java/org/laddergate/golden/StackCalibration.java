@@ -11,8 +11,8 @@ import org.laddergate.thermal.FosterNetwork;
 /**
  * Fits the material values of a layer table to the golden mean curve, within what is known of them.
  *
- * <p>Definition: minimises |W (y - y_model(p))|^2 + sum ((p - p_0)/s)^2 with offset and linear drift of y free; the second
- * term is the prior of the layer table, so parameters the curve says nothing about stay where they are.
+ * <p>Definition: minimises |W (y - y_model(p))|^2 + sum ((p - p_0)/s)^2 with offset and linear drift of y free; the
+ * second term is the prior of the layer table, so parameters the curve says nothing about stay where they are.
  *
  * <p>Method: Gauss-Newton with halved steps; the Jacobian by forward differences, one model each, in parallel.
  *

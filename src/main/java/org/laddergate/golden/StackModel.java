@@ -9,8 +9,9 @@ import org.laddergate.thermal.StackSlab;
 /**
  * A product's layer table as a conduction model with adjustable material values.
  *
- * <p>Parameters, in this order: ln of a factor on each layer's conductivity; ln of a factor on each layer's heat capacity;
- * ln of the film coefficient under the last layer [W/(m^2 K)]; logit of the heated share of the first layer's area.
+ * <p>Parameters, in this order: ln of a factor on each layer's conductivity; ln of a factor on each layer's heat
+ * capacity; ln of the film coefficient under the last layer [W/(m^2 K)]; logit of the heated share of the first
+ * layer's area.
  */
 final class StackModel {
     private static final double TYPICAL_FILM = 1e4;
@@ -79,8 +80,8 @@ final class StackModel {
         List<StackSlab> slabs = new ArrayList<>();
         for (int i = 0; i < n; i++) {
             Layer l = layers.get(i);
-            slabs.add(new StackSlab(l.thicknessMetres() * thickness[i], radiusMetres(i), l.conductivityWattsPerMetreKelvin(),
-                    l.heatCapacityJoulesPerCubicMetreKelvin())
+            slabs.add(new StackSlab(l.thicknessMetres() * thickness[i], radiusMetres(i),
+                    l.conductivityWattsPerMetreKelvin(), l.heatCapacityJoulesPerCubicMetreKelvin())
                     .scaled(Math.exp(parameters[i]) / resistance[i], Math.exp(parameters[n + i])));
         }
         double heatedShare = 1 / (1 + Math.exp(-parameters[2 * n + 1]));

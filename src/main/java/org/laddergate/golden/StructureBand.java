@@ -2,6 +2,7 @@ package org.laddergate.golden;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Locale;
 import org.laddergate.limits.DecisionSettings;
 import org.laddergate.limits.Envelope;
 import org.laddergate.limits.GoldenModel;
@@ -9,13 +10,14 @@ import org.laddergate.limits.StructurePlans;
 import org.laddergate.measurement.Recipe;
 import org.laddergate.thermal.SpectrumSearch;
 import org.laddergate.thermal.StructureSolver;
+import org.laddergate.thermal.StructureUncertainty;
 
 /**
  * Golden spectrum and the band that holds the golden family's structure functions.
  *
- * <p>Definition: at cumulative capacitances spread evenly over the golden path's resistance, mean +- k standard deviations of
- * the cumulative resistance, k the two-sided tolerance factor for the content 1 - risk/points: by Bonferroni a healthy part
- * leaves the band anywhere with at most the stated risk.
+ * <p>Definition: at cumulative capacitances spread evenly over the golden path's resistance, mean +- k standard
+ * deviations of the cumulative resistance, k the two-sided tolerance factor for the content 1 - risk/points: by
+ * Bonferroni a healthy part leaves the band anywhere with at most the stated risk.
  */
 final class StructureBand {
     private static final int POINTS = 24;
@@ -36,8 +38,8 @@ final class StructureBand {
         for (int i = 0; i < sigma.length; i++) {
             sigma[i] = Math.max(model.noiseKelvin()[i] / Math.sqrt(curves.units()), 2e-5 * drop);
         }
-        SpectrumSearch.Found golden = SpectrumSearch.smoothest(curves.bins().centresSeconds(), model.goldenKelvin(), sigma,
-                recipe.heatingPowerWatts(), recipe.pulseSeconds());
+        SpectrumSearch.Found golden = SpectrumSearch.smoothest(curves.bins().centresSeconds(), model.goldenKelvin(),
+                sigma, recipe.heatingPowerWatts(), recipe.pulseSeconds());
         GoldenModel withSpectrum = model.withStructure(golden.amplitudes(), none());
         StructureSolver solver = new StructureSolver(StructurePlans.of(withSpectrum, recipe));
         solver.solve(model.goldenKelvin());
@@ -51,6 +53,16 @@ final class StructureBand {
             }
         }
         return model.withStructure(golden.amplitudes(), band(capacitances, resistance, settings));
+    }
+
+    /** How well one part's structure function is read, for the remarks of a limit set. */
+    static String remark(GoldenModel model, Recipe recipe) {
+        double[] c = model.envelope().capacitancesJoulesPerKelvin();
+        double to = c[c.length / 2];
+        double u = StructureUncertainty.between(StructurePlans.of(model, recipe), model.goldenKelvin(),
+                model.noiseKelvin(), 0, to);
+        return String.format(Locale.ROOT, "From the junction to %.3g J/K one part's structure function is read with a "
+                + "standard uncertainty of %.2g K/W.", to, u);
     }
 
     private static double[] capacitances(double[] r, double[] c) {

@@ -4,6 +4,7 @@ import com.fasterxml.jackson.core.JsonGenerator;
 import java.io.IOException;
 import java.util.List;
 import java.util.stream.IntStream;
+import org.laddergate.measurement.SquareRootStart;
 import org.laddergate.screening.Judgement;
 import org.laddergate.screening.Outcome;
 import org.laddergate.screening.Reason;
@@ -121,6 +122,8 @@ final class VerdictJson {
                 g.writeNumber(trace.binCounts()[bin]);
             }
             g.writeEndArray();
+            Json.number(g, "startCelsius",
+                    SquareRootStart.extrapolate(trace.binTimesSeconds(), trace.binTemperaturesCelsius()));
             g.writeEndObject();
         });
     }

@@ -34,8 +34,8 @@ import java.util.List;
 public record GoldenModel(double firstEdgeSeconds, double lastEdgeSeconds, int binsPerDecade, double[] goldenKelvin,
         double[] noiseKelvin, double[] comparisonNoiseKelvin, double[][] familyFactors, double familyBend,
         double inFamilyLimit, double shapeLimit,
-        double[] networkResistances, double[] networkTimeConstants, List<FaultSignature> signatures, List<SpreadDirection> spread,
-        boolean fromLayers, double[] spectrum, Envelope envelope) {
+        double[] networkResistances, double[] networkTimeConstants, List<FaultSignature> signatures,
+        List<SpreadDirection> spread, boolean fromLayers, double[] spectrum, Envelope envelope) {
 
     public GoldenModel {
         signatures = List.copyOf(signatures);
@@ -45,8 +45,8 @@ public record GoldenModel(double firstEdgeSeconds, double lastEdgeSeconds, int b
     /** The same model with another limit of the shape test. */
     public GoldenModel withShapeLimit(double limit) {
         return new GoldenModel(firstEdgeSeconds, lastEdgeSeconds, binsPerDecade, goldenKelvin, noiseKelvin,
-                comparisonNoiseKelvin, familyFactors, familyBend, inFamilyLimit, limit, networkResistances, networkTimeConstants,
-                signatures, spread, fromLayers, spectrum, envelope);
+                comparisonNoiseKelvin, familyFactors, familyBend, inFamilyLimit, limit, networkResistances,
+                networkTimeConstants, signatures, spread, fromLayers, spectrum, envelope);
     }
 
     /** The same model with a golden spectrum and the band of the structure function. */

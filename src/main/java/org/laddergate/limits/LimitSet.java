@@ -20,7 +20,8 @@ import org.laddergate.measurement.Recipe;
  * @param remarks       warnings and notes of the learning, for people
  */
 public record LimitSet(String product, int revision, LimitState state, String sha256, Instant learntAt, Recipe recipe,
-        DecisionSettings settings, int goldenUnits, List<RegionLimit> regionLimits, GoldenModel model, List<String> remarks) {
+        DecisionSettings settings, int goldenUnits, List<RegionLimit> regionLimits, GoldenModel model,
+        List<String> remarks) {
 
     public LimitSet {
         regionLimits = List.copyOf(regionLimits);
@@ -29,7 +30,7 @@ public record LimitSet(String product, int revision, LimitState state, String sh
 
     /** The same limit set in another state of its life. */
     public LimitSet in(LimitState other) {
-        return new LimitSet(product, revision, other, sha256, learntAt, recipe, settings, goldenUnits, regionLimits, model,
-                remarks);
+        return new LimitSet(product, revision, other, sha256, learntAt, recipe, settings, goldenUnits, regionLimits,
+                model, remarks);
     }
 }

@@ -8,24 +8,26 @@ import org.apache.commons.math3.linear.CholeskyDecomposition;
 import org.apache.commons.math3.linear.DecompositionSolver;
 import org.apache.commons.math3.linear.RealMatrix;
 import org.laddergate.limits.evidence.FamilyModel;
+import org.laddergate.thermal.InnerProduct;
 
 /**
  * Reads one region's excess resistance off a deviation from golden.
  *
- * <p>Definition: R - R_golden = s'S^-1 d / s'S^-1 s with s the deviation of 1 K/W more in the region and S the covariance
- * of everything else: noise, power, drift, and the spread of all other directions in the golden family; its variance is
- * 1 / s'S^-1 s. An offset of the curve is free.
+ * <p>Definition: R - R_golden = s'S^-1 d / s'S^-1 s with s the deviation of 1 K/W more in the region and S the
+ * covariance of everything else: noise, power, drift, and the spread of all other directions in the golden family; its
+ * variance is 1 / s'S^-1 s. An offset of the curve is free.
  *
  * <p>Source: generalised least squares (Aitken, Proc. R. Soc. Edinburgh 55 (1935) 42).
  *
- * <p>Why not the family's own covariance: the family varies in the region's own direction too, only not exactly along s;
- * weighting with its inverse looks at nothing but that small difference and reads half the truth.
+ * <p>Why not the family's own covariance: the family varies in the region's own direction too, only not exactly along
+ * s; weighting with its inverse looks at nothing but that small difference and reads half the truth.
  *
  * <p>Cost: one product of length m for a reading. Immutable.
  */
 public final class RegionEstimator {
-    private final double[][] otherCovariance;
-    private final double[] perKelvinPerWatt;
+    private final RealMatrix contrasts;
+    private final double[][] others;
+    private final double[] shape;
     private final RealMatrix precision;
     private final Weights weights;
 
@@ -40,27 +42,19 @@ public final class RegionEstimator {
     private record Weights(double[] values, double uncertainty) {}
 
     private RegionEstimator(double[][] otherCovariance, double[] perKelvinPerWatt) {
-        this.otherCovariance = otherCovariance;
-        this.perKelvinPerWatt = perKelvinPerWatt;
-        RealMatrix contrasts = FamilyModel.contrasts(perKelvinPerWatt.length);
-        DecompositionSolver solver = solver(contrasts, otherCovariance);
-        this.weights = weights(contrasts, solver, perKelvinPerWatt);
+        this.contrasts = FamilyModel.contrasts(perKelvinPerWatt.length);
+        RealMatrix reduced = FamilyModel.symmetrised(contrasts
+                .multiply(new Array2DRowRealMatrix(otherCovariance, false)).multiply(contrasts.transpose()));
+        this.others = reduced.getData();
+        this.shape = contrasts.operate(perKelvinPerWatt);
+        DecompositionSolver solver = new CholeskyDecomposition(reduced).getSolver();
+        this.weights = weights(solver);
         this.precision = contrasts.transpose().multiply(solver.solve(contrasts));
     }
 
-    private static DecompositionSolver solver(RealMatrix contrasts, double[][] covariance) {
-        RealMatrix reduced = contrasts.multiply(new Array2DRowRealMatrix(covariance, false))
-                .multiply(contrasts.transpose());
-        return new CholeskyDecomposition(FamilyModel.symmetrised(reduced)).getSolver();
-    }
-
-    private static Weights weights(RealMatrix contrasts, DecompositionSolver solver, double[] shape) {
-        double[] s = contrasts.operate(shape);
-        double[] image = solver.solve(new ArrayRealVector(s, false)).toArray();
-        double information = 0;
-        for (int i = 0; i < s.length; i++) {
-            information += s[i] * image[i];
-        }
+    private Weights weights(DecompositionSolver solver) {
+        double[] image = solver.solve(new ArrayRealVector(shape, false)).toArray();
+        double information = InnerProduct.of(shape, image);
         double[] w = contrasts.preMultiply(image);
         for (int i = 0; i < w.length; i++) {
             w[i] /= information;
@@ -79,18 +73,22 @@ public final class RegionEstimator {
         return new RegionEstimator(otherCovariance(region, directions, base), perKelvinPerWatt(slight));
     }
 
-    /** Reads when something else may have happened to the curve as well, with the given covariance [K^2]. */
-    public Reading readAllowing(double[][] covariance, double[] deviationKelvin) {
-        int m = covariance.length;
-        double[][] sum = new double[m][m];
-        for (int i = 0; i < m; i++) {
-            for (int j = 0; j < m; j++) {
-                sum[i][j] = otherCovariance[i][j] + covariance[i][j];
+    /**
+     * Reads when something else may have happened to the curve as well.
+     *
+     * @param allowed covariance of it in the coordinates of {@link FamilyModel#contrasts} [K^2], symmetric, not modified
+     */
+    public Reading readAllowing(double[][] allowed, double[] deviationKelvin) {
+        int n = others.length;
+        double[][] sum = new double[n][n];
+        for (int i = 0; i < n; i++) {
+            for (int j = 0; j <= i; j++) {
+                sum[i][j] = others[i][j] + allowed[i][j];
+                sum[j][i] = sum[i][j];
             }
         }
-        RealMatrix contrasts = FamilyModel.contrasts(m);
-        Weights lenient = weights(contrasts, solver(contrasts, sum), perKelvinPerWatt);
-        return new Reading(product(lenient.values(), deviationKelvin), lenient.uncertainty());
+        Weights lenient = weights(new CholeskyDecomposition(new Array2DRowRealMatrix(sum, false)).getSolver());
+        return new Reading(InnerProduct.of(lenient.values(), deviationKelvin), lenient.uncertainty());
     }
 
     private static double[][] otherCovariance(String region, List<SpreadDirection> directions, double[][] base) {
@@ -119,7 +117,7 @@ public final class RegionEstimator {
 
     /** Excess over the golden resistance [K/W]. */
     public double excessKelvinPerWatt(double[] deviationKelvin) {
-        return product(weights.values(), deviationKelvin);
+        return InnerProduct.of(weights.values(), deviationKelvin);
     }
 
     /** Standard uncertainty of a reading [K/W]. */
@@ -130,14 +128,6 @@ public final class RegionEstimator {
     /** Size of any signature in a deviation under the same covariance, in units of the signature. */
     public double size(double[] signatureKelvin, double[] deviationKelvin) {
         double[] image = precision.operate(signatureKelvin);
-        return product(image, deviationKelvin) / product(image, signatureKelvin);
-    }
-
-    private static double product(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
-        }
-        return sum;
+        return InnerProduct.of(image, deviationKelvin) / InnerProduct.of(image, signatureKelvin);
     }
 }

@@ -6,7 +6,9 @@ import java.util.Locale;
 public enum RegionRole {
     /** Belongs to the part: a fault here fails the part. */
     PART,
-    /** Belongs to the tester (clamping, cold plate): a shift here makes the measurement invalid and warns the station. */
+    /**
+     * Belongs to the tester (clamping, cold plate): a shift here makes the measurement invalid and warns the station.
+     */
     FIXTURE;
 
     /** Lower-case word used in files and on the wire. */

@@ -6,7 +6,9 @@ import org.laddergate.thermal.SpectrumPlan;
 
 /** The one way in which structure functions of a product's parts are computed, golden units and production alike. */
 public final class StructurePlans {
-    /** Smoothness and closeness to golden, in units of the noise; figures in docs/decisions/0003-spectrum-smoothing.md. */
+    /**
+     * Smoothness and closeness to golden, in units of the noise; figures in docs/decisions/0003-spectrum-smoothing.md.
+     */
     private static final double SMOOTHING = 30;
     private static final double RIDGE = 3;
 

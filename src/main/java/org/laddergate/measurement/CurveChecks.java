@@ -88,8 +88,8 @@ public final class CurveChecks {
             longest = Math.max(longest, run);
         }
         if (longest > bound) {
-            add(found, InvalidReason.TOO_FEW_SAMPLES, "There is no sample for %.0f time bins in a row (at most %.0f).", longest,
-                    bound, longest, bound);
+            add(found, InvalidReason.TOO_FEW_SAMPLES, "There is no sample for %.0f time bins in a row (at most %.0f).",
+                    longest, bound, longest, bound);
         }
         return found;
     }

@@ -3,8 +3,8 @@ package org.laddergate.measurement;
 import java.util.Locale;
 
 /**
- * Why a measurement is not to be believed. Each constant says what happened and what the operator should do; the code on
- * the wire is the constant's name in lower case and never changes.
+ * Why a measurement is not to be believed. Each constant says what happened and what the operator should do; the code
+ * on the wire is the constant's name in lower case and never changes.
  */
 public enum InvalidReason {
     /** Too many bins of the recipe's window hold no sample. Check the sampling rate and the transfer. */

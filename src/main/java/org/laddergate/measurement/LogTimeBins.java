@@ -3,14 +3,15 @@ package org.laddergate.measurement;
 /**
  * Fixed bins, equally wide in ln t, onto which every curve of a product is brought.
  *
- * <p>Definition: bin i holds the samples with edge(i) &lt;= t &lt; edge(i+1); its value is the mean of the samples moved to
- * the bin's centre along the local slope dT/d ln t, so that curves sampled at other times stay comparable. An empty bin
- * between filled ones takes the straight line in ln t between its neighbours; an empty bin at either end stays NaN.
+ * <p>Definition: bin i holds the samples with edge(i) &lt;= t &lt; edge(i+1); its value is the mean of the samples
+ * moved to the bin's centre along the local slope dT/d ln t, so that curves sampled at other times stay comparable. An
+ * empty bin between filled ones takes the straight line in ln t between its neighbours; an empty bin at either end
+ * stays NaN.
  *
  * <p>Domain: times strictly increasing and positive; samples outside the bins are ignored.
  *
- * <p>Error: the second-order term, about (bin width in ln t)^2/24 times d2T/d(ln t)^2; at 50 bins a decade below 1e-4 of
- * that second derivative.
+ * <p>Error: the second-order term, about (bin width in ln t)^2/24 times d2T/d(ln t)^2; at 50 bins a decade below 1e-4
+ * of that second derivative.
  *
  * <p>Cost: one pass over the samples and one over the bins, no allocation in the Into form. Immutable, safe to share.
  */
@@ -82,7 +83,8 @@ public final class LogTimeBins {
      *
      * @param timesSeconds times [s], strictly increasing, not modified
      * @param values       values, same length, not modified
-     * @param out          value at each bin centre, length {@link #size()}, overwritten; NaN where too many end bins are empty
+     * @param out          value at each bin centre, length {@link #size()}, overwritten; NaN where too many end bins
+     *                     are empty
      * @param counts       samples in each bin, length {@link #size()}, overwritten
      * @return number of bins that hold at least one sample
      */

@@ -3,8 +3,9 @@ package org.laddergate.measurement;
 /**
  * Noise of a binned curve from its own third differences.
  *
- * <p>Definition: e_i = T_(i-1) - 3 T_i + 3 T_(i+1) - T_(i+2); for independent noise of equal size Var e = 20 sigma^2, and
- * a smooth curve leaves nothing: a deviation of amplitude A over one decade adds about A (2.3/n)^3 at n bins a decade.
+ * <p>Definition: e_i = T_(i-1) - 3 T_i + 3 T_(i+1) - T_(i+2); for independent noise of equal size Var e = 20 sigma^2,
+ * and a smooth curve leaves nothing: a deviation of amplitude A over one decade adds about A (2.3/n)^3 at n bins a
+ * decade.
  *
  * <p>Method: for one curve against a known noise profile the median of |e|/(sqrt(20) sigma), scaled to one for normal
  * noise, so that spikes and the corner of a fault do not count; for a population the pooled mean square.

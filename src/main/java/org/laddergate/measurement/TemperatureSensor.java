@@ -22,7 +22,9 @@ public final class TemperatureSensor {
         this.coefficients = coefficients;
     }
 
-    /** Linear sensor: K factor [K/V], negative for a forward voltage, and the temperature that 0 V would mean [deg C]. */
+    /**
+     * Linear sensor: K factor [K/V], negative for a forward voltage, and the temperature that 0 V would mean [deg C].
+     */
     public static TemperatureSensor linear(double kFactorKelvinPerVolt, double celsiusAtZeroVolts) {
         if (!(Math.abs(kFactorKelvinPerVolt) > 0)) {
             throw new IllegalArgumentException("a K factor of " + kFactorKelvinPerVolt + " K/V measures nothing");

@@ -67,8 +67,8 @@ public final class Engine implements ScreeningDesk {
     }
 
     /**
-     * Works out the plan of a product's released limits and judges its golden curve some hundred times, so that the first
-     * part of a shift waits neither for the plan nor for the compiler.
+     * Works out the plan of a product's released limits and judges its golden curve some hundred times, so that the
+     * first part of a shift waits neither for the plan nor for the compiler.
      */
     public void warmUp(String product) {
         limits.released(product).ifPresent(set -> {

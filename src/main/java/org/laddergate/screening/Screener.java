@@ -18,9 +18,9 @@ import org.laddergate.measurement.NoiseEstimate;
 /**
  * Judges one measurement at a time by a plan. Not thread-safe: one per thread and plan; it owns its scratch arrays.
  *
- * <p>Order of judgement: is it a measurement at all (coverage, signal)? Then all explanations of its deviation from golden
- * are weighed. If any limit is broken, the most probable explanation decides: an error of the measurement or a shift of
- * the fixture makes it invalid, anything else fails the part. If no limit is broken the part passes.
+ * <p>Order of judgement: is it a measurement at all (coverage, signal)? Then all explanations of its deviation from
+ * golden are weighed. If any limit is broken, the most probable explanation decides: an error of the measurement or a
+ * shift of the fixture makes it invalid, anything else fails the part. If no limit is broken the part passes.
  */
 public final class Screener {
     /** Changes whenever the same curve and limits could give another number. */
@@ -123,12 +123,12 @@ public final class Screener {
             }
         }
         if (shape > model.shapeLimit()) {
-            reasons.add(new Reason("shape_of_a_fault", text("The curve looks like a fault rather than like a healthy part: "
-                    + "log odds %.2f, limit %.2f.", shape, model.shapeLimit()), shape, model.shapeLimit()));
+            reasons.add(new Reason("shape_of_a_fault", text("The curve looks like a fault rather than like a healthy "
+                    + "part: log odds %.2f, limit %.2f.", shape, model.shapeLimit()), shape, model.shapeLimit()));
         }
         if (tSquared > model.inFamilyLimit()) {
-            againstPart.add(new Reason("not_in_family", text("The curve is outside the golden family: T-squared %.1f, limit "
-                    + "%.1f.", tSquared, model.inFamilyLimit()), tSquared, model.inFamilyLimit()));
+            againstPart.add(new Reason("not_in_family", text("The curve is outside the golden family: T-squared %.1f, "
+                    + "limit %.1f.", tSquared, model.inFamilyLimit()), tSquared, model.inFamilyLimit()));
         }
         structure.reason().ifPresent(againstPart::add);
         reasons.addAll(0, againstPart);

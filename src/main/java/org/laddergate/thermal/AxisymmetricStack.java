@@ -8,13 +8,13 @@ import org.apache.commons.math3.linear.EigenDecomposition;
 /**
  * Heat conduction in a stack of discs heated evenly on a disc of the top face: the step response as a Foster network.
  *
- * <p>Definition: rho c dT/dt = div(k grad T) in r and z; adiabatic walls and shoulders; the bottom face loses heat through
- * a film coefficient; the temperature answered for is the mean over the heated disc. A void is a ring of one slab filled
- * with still air through its whole thickness.
+ * <p>Definition: rho c dT/dt = div(k grad T) in r and z; adiabatic walls and shoulders; the bottom face loses heat
+ * through a film coefficient; the temperature answered for is the mean over the heated disc. A void is a ring of one
+ * slab filled with still air through its whole thickness.
  *
- * <p>Method: finite volumes on a tensor grid with lines on every interface, radius and void edge; the resulting
- * C dT/dt = -A T + f P (C diagonal, A symmetric positive definite) is projected onto the solutions of (A + s C) x = f for
- * s = 0 and shifts spread over all time scales (rational Krylov, a Galerkin projection), and the small problem is
+ * <p>Method: finite volumes on a tensor grid with lines on every interface, radius and void edge; the resulting C
+ * dT/dt = -A T + f P (C diagonal, A symmetric positive definite) is projected onto the solutions of (A + s C) x = f
+ * for s = 0 and shifts spread over all time scales (rational Krylov, a Galerkin projection), and the small problem is
  * diagonalised. All stages are positive, and the steady state is exactly that of the grid.
  *
  * <p>Source: finite volumes as in Patankar, Numerical Heat Transfer and Fluid Flow (1980), chapter 4, with the harmonic
@@ -22,10 +22,11 @@ import org.apache.commons.math3.linear.EigenDecomposition;
  *
  * <p>Domain: at least one slab, heated radius at most that of the first slab, film coefficient positive.
  *
- * <p>Error: measured in AxisymmetricStackTest against exact one-dimensional solutions and an independent two-dimensional
- * program. Voids: shapes hold better than sizes.
+ * <p>Error: measured in AxisymmetricStackTest against exact one-dimensional solutions and an independent
+ * two-dimensional program. Voids: shapes hold better than sizes.
  *
- * <p>Identities: the resistances of the network add up to the steady resistance, and so do the slab shares and the film.
+ * <p>Identities: the resistances of the network add up to the steady resistance, and so do the slab shares and the
+ * film.
  *
  * <p>Cost: about a thousand cells, some twenty banded Cholesky factorisations; tens of milliseconds. Immutable.
  */
@@ -66,9 +67,9 @@ public final class AxisymmetricStack {
         double[] load = new double[n];
         for (int i = 0; i < n; i++) {
             double[] image = grid.apply(basis.get(i));
-            load[i] = dot(basis.get(i), source);
+            load[i] = InnerProduct.of(basis.get(i), source);
             for (int j = 0; j <= i; j++) {
-                reduced[i][j] = dot(basis.get(j), image);
+                reduced[i][j] = InnerProduct.of(basis.get(j), image);
                 reduced[j][i] = reduced[i][j];
             }
         }
@@ -79,9 +80,9 @@ public final class AxisymmetricStack {
         for (int k = 0; k < n; k++) {
             double rate = eigen.getRealEigenvalue(k);
             double[] v = eigen.getEigenvector(k).toArray();
-            double gain = dot(v, load);
+            double gain = InnerProduct.of(v, load);
             double resistance = gain * gain / rate;
-            if (rate > 0 && resistance > 1e-12 * dot(steady, source)) {
+            if (rate > 0 && resistance > 1e-12 * InnerProduct.of(steady, source)) {
                 r[kept] = resistance;
                 tau[kept++] = 1 / rate;
             }
@@ -101,7 +102,8 @@ public final class AxisymmetricStack {
             double filmWattsPerSquareMetreKelvin, List<Void> voids) {
         if (slabs.isEmpty() || !(heatedRadiusMetres > 0)
                 || heatedRadiusMetres > slabs.get(0).radiusMetres() * (1 + 1e-9)) {
-            throw new IllegalArgumentException("the heated disc of " + heatedRadiusMetres + " m must lie on the first slab");
+            throw new IllegalArgumentException("the heated disc of " + heatedRadiusMetres
+                    + " m must lie on the first slab");
         }
         if (!(filmWattsPerSquareMetreKelvin > 0 && Double.isFinite(filmWattsPerSquareMetreKelvin))) {
             throw new IllegalArgumentException("film coefficient " + filmWattsPerSquareMetreKelvin + " is not positive");
@@ -153,14 +155,6 @@ public final class AxisymmetricStack {
         double sum = 0;
         for (int i = 0; i < a.length; i++) {
             sum += a[i] * b[i] * w[i];
-        }
-        return sum;
-    }
-
-    private static double dot(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
         }
         return sum;
     }

@@ -1,8 +1,8 @@
 package org.laddergate.thermal;
 
 /**
- * A heat path as a ladder: from the junction a capacitance to the reference, a resistance to the next node, a capacitance
- * there, and so on; the last resistance ends at the isothermal heat sink.
+ * A heat path as a ladder: from the junction a capacitance to the reference, a resistance to the next node, a
+ * capacitance there, and so on; the last resistance ends at the isothermal heat sink.
  *
  * <p>Definition: Z(s) = 1/(s C_1 + 1/(R_1 + 1/(s C_2 + ... + 1/(s C_n + 1/R_n)))) [K/W].
  *

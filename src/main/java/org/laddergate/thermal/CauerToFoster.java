@@ -9,11 +9,12 @@ import java.util.Arrays;
  * b_kk = 1/sqrt(R_k C_k) and b_k,k+1 = -1/sqrt(R_k C_(k+1)). With B = U S V', 1/tau_j = sigma_j^2 and
  * R_j = v_1j^2/(C_1 sigma_j^2).
  *
- * <p>Method: singular values of the bidiagonal matrix by implicit QR with a shift that falls back to zero where a shift
- * would cost relative accuracy; only the first row of V is carried along. The matrix B'B itself is never formed: its small
- * eigenvalues, the slow time constants that matter most, would be lost below the rounding of the large ones.
+ * <p>Method: singular values of the bidiagonal matrix by implicit QR with a shift that falls back to zero where a
+ * shift would cost relative accuracy; only the first row of V is carried along. The matrix B'B itself is never formed:
+ * its small eigenvalues, the slow time constants that matter most, would be lost below the rounding of the large ones.
  *
- * <p>Source: Demmel and Kahan, Accurate singular values of bidiagonal matrices, SIAM J. Sci. Stat. Comput. 11 (1990) 873.
+ * <p>Source: Demmel and Kahan, Accurate singular values of bidiagonal matrices, SIAM J. Sci. Stat. Comput. 11 (1990)
+ * 873.
  *
  * <p>Domain: as {@link CauerLadder}.
  *
@@ -125,7 +126,10 @@ public final class CauerToFoster {
         private double smallest;
         private double largest;
 
-        /** Relative criteria of the paper; sets one negligible element to zero. Also bounds the block's singular values. */
+        /**
+         * Relative criteria of the paper; sets one negligible element to zero. Also bounds the block's singular
+         * values.
+         */
         private boolean converged(int low, int high, boolean down) {
             largest = 0;
             for (int k = low; k <= high; k++) {

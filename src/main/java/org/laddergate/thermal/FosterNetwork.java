@@ -8,7 +8,8 @@ package org.laddergate.thermal;
  *
  * <p>Source: Foster, A reactance theorem, Bell Syst. Tech. J. 3 (1924) 259; thermal use as in JESD51-14 annex.
  *
- * <p>Domain: resistances non-negative, time constants positive, both finite; any order, repeated time constants allowed.
+ * <p>Domain: resistances non-negative, time constants positive, both finite; any order, repeated time constants
+ * allowed.
  *
  * <p>Error: one rounding per stage; the differences are formed by expm1, so that short times lose nothing.
  *

@@ -5,14 +5,14 @@ import java.util.Arrays;
 /**
  * Converts a Foster network into the Cauer ladder of the same impedance.
  *
- * <p>Definition: Z(s) = sum R_j/(1 + s tau_j) = sum w_j/(s + lambda_j), lambda = 1/tau, w = R/tau, is developed into the
- * continued fraction of {@link CauerLadder}.
+ * <p>Definition: Z(s) = sum R_j/(1 + s tau_j) = sum w_j/(s + lambda_j), lambda = 1/tau, w = R/tau, is developed into
+ * the continued fraction of {@link CauerLadder}.
  *
- * <p>Method: the array (q_k, e_k) of the Stieltjes continued fraction is built by adding one pole after the other, largest
- * lambda first. Before a pole is added at the origin, the origin is moved to it by
- * delta = (tau_new - tau_old)/(tau_new tau_old); both steps only add, multiply and divide positive numbers, so every element
- * keeps full relative accuracy. The textbook recursion subtracts and needs hundreds of digits for a hundred stages.
- * Stages of zero resistance are left out and equal time constants are merged: they have no ladder of their own.
+ * <p>Method: the array (q_k, e_k) of the Stieltjes continued fraction is built by adding one pole after the other,
+ * largest lambda first. Before a pole is added at the origin, the origin is moved to it by delta = (tau_new -
+ * tau_old)/(tau_new tau_old); both steps only add, multiply and divide positive numbers, so every element keeps full
+ * relative accuracy. The textbook recursion subtracts and needs hundreds of digits for a hundred stages. Stages of
+ * zero resistance are left out and equal time constants are merged: they have no ladder of their own.
  *
  * <p>Source: differential quotient-difference steps, Fernando and Parlett, Numer. Math. 67 (1994) 191; recovering
  * recursion coefficients by adding nodes, Laurie, J. Comput. Appl. Math. 112 (1999) 165.
@@ -100,8 +100,8 @@ public final class FosterToCauer {
     }
 
     /**
-     * Moves the origin by a shift and adds a pole of a weight there, both in one sweep: the shifted q_k and e_k are used as
-     * soon as they are known.
+     * Moves the origin by a shift and adds a pole of a weight there, both in one sweep: the shifted q_k and e_k are
+     * used as soon as they are known.
      *
      * @param size number of poles so far
      * @return the new total weight

@@ -7,13 +7,13 @@ import java.util.List;
 /**
  * A one-dimensional heat path of uniform layers, lumped elements and cones, cut into a ladder.
  *
- * <p>Definition: a layer of resistance R and capacitance C is a uniform line; a cone is a spherical sector from r0 to r1
- * with R = (1/r0 - 1/r1)/(k Omega) and C = c_v Omega (r1^3 - r0^3)/3; a lumped resistance has no capacitance and a lumped
- * capacitance no resistance.
+ * <p>Definition: a layer of resistance R and capacitance C is a uniform line; a cone is a spherical sector from r0 to
+ * r1 with R = (1/r0 - 1/r1)/(k Omega) and C = c_v Omega (r1^3 - r0^3)/3; a lumped resistance has no capacitance and a
+ * lumped capacitance no resistance.
  *
- * <p>Method: every distributed element is cut into pieces whose resistance grows geometrically away from the junction, where
- * the field is steepest early on; each piece is a pi section (half its capacitance at either end), which is second order in
- * the piece. Cones are cut evenly in ln r and each piece keeps its own exact R and C.
+ * <p>Method: every distributed element is cut into pieces whose resistance grows geometrically away from the junction,
+ * where the field is steepest early on; each piece is a pi section (half its capacitance at either end), which is
+ * second order in the piece. Cones are cut evenly in ln r and each piece keeps its own exact R and C.
  *
  * <p>Source: lumped sections of RC lines, e.g. Carslaw and Jaeger (1959), section 3.4 for the continuous line.
  *

@@ -7,19 +7,20 @@ import org.apache.commons.math3.linear.CholeskyDecomposition;
 /**
  * Minimises x'Hx/2 - f'x over x &gt;= 0 for one positive definite H and many f.
  *
- * <p>Method: the inverse G of H is prepared. The free minimum is x = G f; components that would be negative are held at zero,
- * which changes the others by -G_K G_KK^-1 x_K; held components whose multiplier turns negative are let go again. Each round
- * exchanges all offenders at once, and falls back to one at a time if that does not settle (block principal pivoting).
+ * <p>Method: the inverse G of H is prepared. The free minimum is x = G f; components that would be negative are held
+ * at zero, which changes the others by -G_K G_KK^-1 x_K; held components whose multiplier turns negative are let go
+ * again. Each round exchanges all offenders at once, and falls back to one at a time if that does not settle (block
+ * principal pivoting).
  *
- * <p>Source: Portugal, Judice and Vicente, Math. Comp. 63 (1994) 625; Lawson and Hanson, Solving Least Squares Problems,
- * chapter 23, for the conditions of the minimum.
+ * <p>Source: Portugal, Judice and Vicente, Math. Comp. 63 (1994) 625; Lawson and Hanson, Solving Least Squares
+ * Problems, chapter 23, for the conditions of the minimum.
  *
  * <p>Domain: H symmetric positive definite, condition below about 1e12.
  *
  * <p>Identities: x &gt;= 0, Hx - f &gt;= 0 and x'(Hx - f) = 0 to rounding; tested.
  *
- * <p>Cost: n^2 for the free minimum, then |K|^3/3 + n |K| for each exchange of the held set K; no allocation. The object is
- * immutable and shared, the workspace is not.
+ * <p>Cost: n^2 for the free minimum, then |K|^3/3 + n |K| for each exchange of the held set K; no allocation. The
+ * object is immutable and shared, the workspace is not.
  */
 final class NonNegativeQuadratic {
     private static final int MOST_ROUNDS = 400;
@@ -64,11 +65,7 @@ final class NonNegativeQuadratic {
     int minimiseInto(double[] f, double[] x, Workspace w) {
         double scale = 0;
         for (int i = 0; i < size; i++) {
-            double sum = 0;
-            double[] row = inverse[i];
-            for (int j = 0; j < size; j++) {
-                sum += row[j] * f[j];
-            }
+            double sum = InnerProduct.of(inverse[i], f);
             w.free[i] = sum;
             w.held[i] = probable[i];
             scale = Math.max(scale, Math.abs(sum));

@@ -5,21 +5,21 @@ import java.util.Arrays;
 /**
  * Non-negative time constant spectrum straight from a cooling curve.
  *
- * <p>Definition: T(t) = T_end + drift t + P sum a_j (1 - exp(-t_h/tau_j)) exp(-t/tau_j) with a_j &gt;= 0 on a fixed grid of
- * tau_j, twelve a decade from a thousandth of the first time to ten times the last. Minimised is
- * sum ((T_i - model_i)/sigma_i)^2 + weight^2 |D2 u|^2 + ridge^2 |u|^2, offset and drift free, D2 second differences:
+ * <p>Definition: T(t) = T_end + drift t + P sum a_j (1 - exp(-t_h/tau_j)) exp(-t/tau_j) with a_j &gt;= 0 on a fixed
+ * grid of tau_j, twelve a decade from a thousandth of the first time to ten times the last. Minimised is sum ((T_i -
+ * model_i)/sigma_i)^2 + weight^2 |D2 u|^2 + ridge^2 |u|^2, offset and drift free, D2 second differences:
  * <ul>
- * <li>without a reference u_j = a_j/s_j, s_j = sqrt(tau_j/(tau_j + tau_0)): early heat flow makes a spectrum that falls as
- * sqrt(tau) towards short times, and so does the penalty;</li>
- * <li>with a reference spectrum b, u_j = (a_j - b_j)/(b_j + floor): a part is drawn towards its golden family as far as the
- * noise leaves it open, so that healthy parts scatter little and a fault still shows.</li>
+ * <li>without a reference u_j = a_j/s_j, s_j = sqrt(tau_j/(tau_j + tau_0)): early heat flow makes a spectrum that
+ * falls as sqrt(tau) towards short times, and so does the penalty;</li>
+ * <li>with a reference spectrum b, u_j = (a_j - b_j)/(b_j + floor): a part is drawn towards its golden family as far
+ * as the noise leaves it open, so that healthy parts scatter little and a fault still shows.</li>
  * </ul>
  *
  * <p>Why not a numerical derivative and iterative deconvolution: they smear plateaus; figures in
  * docs/decisions/0003-spectrum-smoothing.md.
  *
- * <p>Source: regularised non-negative inversion, e.g. Provencher, Comput. Phys. Commun. 27 (1982) 213; smoothing weight by the
- * discrepancy principle, Morozov (1966).
+ * <p>Source: regularised non-negative inversion, e.g. Provencher, Comput. Phys. Commun. 27 (1982) 213; smoothing
+ * weight by the discrepancy principle, Morozov (1966).
  *
  * <p>Domain: times strictly increasing, at least 8; sigmas positive.
  *
@@ -79,7 +79,7 @@ public final class SpectrumPlan {
         double[][] h = new double[n][n];
         for (int j = 0; j < n; j++) {
             for (int k = 0; k <= j; k++) {
-                h[j][k] = dot(reduced[j], reduced[k]);
+                h[j][k] = InnerProduct.of(reduced[j], reduced[k]);
                 h[k][j] = h[j][k];
             }
         }
@@ -88,7 +88,8 @@ public final class SpectrumPlan {
             steepest = Math.max(steepest, h[j][j]);
         }
         // Neighbouring time constants are nearly the same curve: without a least ridge H is singular in double precision.
-        double[][] penalty = penalty(n, referred ? 0 : unseen(times[0]), weight, Math.max(ridge, Math.sqrt(LEAST_RIDGE * steepest)));
+        double[][] penalty = penalty(n, referred ? 0 : unseen(times[0]), weight,
+                Math.max(ridge, Math.sqrt(LEAST_RIDGE * steepest)));
         for (int j = 0; j < n; j++) {
             for (int k = 0; k < n; k++) {
                 h[j][k] += penalty[j][k];
@@ -159,7 +160,9 @@ public final class SpectrumPlan {
         return zero;
     }
 
-    /** Number of time constants that have died away before the first sample: only the square-root law speaks for them. */
+    /**
+     * Number of time constants that have died away before the first sample: only the square-root law speaks for them.
+     */
     private int unseen(double firstSeconds) {
         int count = 0;
         while (count < tau.length && tau[count] < firstSeconds / 4) {
@@ -202,7 +205,7 @@ public final class SpectrumPlan {
             line[i] = weights[i] * times[i];
         }
         normalise(one);
-        double c = dot(one, line);
+        double c = InnerProduct.of(one, line);
         for (int i = 0; i < m; i++) {
             line[i] -= c * one[i];
         }
@@ -211,7 +214,7 @@ public final class SpectrumPlan {
     }
 
     private static void normalise(double[] v) {
-        double norm = Math.sqrt(dot(v, v));
+        double norm = Math.sqrt(InnerProduct.of(v, v));
         for (int i = 0; i < v.length; i++) {
             v[i] /= norm;
         }
@@ -219,19 +222,11 @@ public final class SpectrumPlan {
 
     private void removeLine(double[] row) {
         for (double[] d : freeDirections) {
-            double c = dot(row, d);
+            double c = InnerProduct.of(row, d);
             for (int i = 0; i < row.length; i++) {
                 row[i] -= c * d[i];
             }
         }
-    }
-
-    private static double dot(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
-        }
-        return sum;
     }
 
     /** Scratch arrays of one caller. */
@@ -270,7 +265,7 @@ public final class SpectrumPlan {
      */
     public int solveInto(double[] temperatures, double[] out, Workspace work) {
         for (int j = 0; j < tau.length; j++) {
-            work.linear[j] = dot(reduced[j], temperatures) + pull[j];
+            work.linear[j] = InnerProduct.of(reduced[j], temperatures) + pull[j];
         }
         int rounds = quadratic.minimiseInto(work.linear, work.x, work.inner);
         for (int j = 0; j < tau.length; j++) {
@@ -290,6 +285,6 @@ public final class SpectrumPlan {
             r[i] *= weights[i];
         }
         removeLine(r);
-        return Math.sqrt(dot(r, r) / r.length);
+        return Math.sqrt(InnerProduct.of(r, r) / r.length);
     }
 }

@@ -3,9 +3,9 @@ package org.laddergate.thermal;
 /**
  * Finds the smoothest spectrum that still meets a curve within its noise.
  *
- * <p>Method: the smoothing weight is lowered from large by factors of two until the misfit comes within a given factor of the
- * best that any weight reaches (discrepancy principle with the reachable misfit instead of one, since a grid of time
- * constants meets no curve exactly).
+ * <p>Method: the smoothing weight is lowered from large by factors of two until the misfit comes within a given factor
+ * of the best that any weight reaches (discrepancy principle with the reachable misfit instead of one, since a grid of
+ * time constants meets no curve exactly).
  */
 public final class SpectrumSearch {
     private static final int STEPS = 26;

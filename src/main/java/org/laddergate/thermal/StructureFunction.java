@@ -3,16 +3,16 @@ package org.laddergate.thermal;
 import java.util.Arrays;
 
 /**
- * Cumulative structure function of a ladder: cumulative thermal capacitance over cumulative thermal resistance along the
- * heat path.
+ * Cumulative structure function of a ladder: cumulative thermal capacitance over cumulative thermal resistance along
+ * the heat path.
  *
  * <p>Definition: the ladder's C_k sits in the middle of the piece of the heat path that it stands for. Point k of the
- * function therefore lies at R_(k) = R_1 + ... + R_(k-1), C_(k) = C_1 + ... + C_(k-1) + C_k/2; the last point is the end of
- * the ladder. Between points ln C is linear in R, as for a path that spreads; below the first point the function starts at
- * R = 0.
+ * function therefore lies at R_(k) = R_1 + ... + R_(k-1), C_(k) = C_1 + ... + C_(k-1) + C_k/2; the last point is the
+ * end of the ladder. Between points ln C is linear in R, as for a path that spreads; below the first point the
+ * function starts at R = 0.
  *
- * <p>Source: Protonotarios and Wing, Theory of nonuniform RC lines, IEEE Trans. Circuit Theory 14 (1967) 2; cumulative and
- * differential structure functions as in JESD51-14.
+ * <p>Source: Protonotarios and Wing, Theory of nonuniform RC lines, IEEE Trans. Circuit Theory 14 (1967) 2; cumulative
+ * and differential structure functions as in JESD51-14.
  *
  * <p>Error: of the ladder it is made from. At a vertical step (a thick metal) no finite ladder is right pointwise in C;
  * read R there.
@@ -90,8 +90,8 @@ public final class StructureFunction {
     }
 
     /**
-     * Cumulative resistance where the path has gathered a capacitance [K/W]; 0 below the first point, the total above the
-     * last. A bad joint adds resistance but hardly any capacitance: this is the reading to compare parts by.
+     * Cumulative resistance where the path has gathered a capacitance [K/W]; 0 below the first point, the total above
+     * the last. A bad joint adds resistance but hardly any capacitance: this is the reading to compare parts by.
      */
     public double resistanceAt(double capacitanceJoulesPerKelvin) {
         return resistanceAt(resistances, capacitances, resistances.length, capacitanceJoulesPerKelvin);
@@ -133,8 +133,8 @@ public final class StructureFunction {
     }
 
     /**
-     * Differential structure function between points i and i + 1: K = dC/dR = C ln-slope at the middle [W^2 s/K^2], that is
-     * conductivity times heat capacity times the square of the cross-section.
+     * Differential structure function between points i and i + 1: K = dC/dR = C ln-slope at the middle [W^2 s/K^2],
+     * that is conductivity times heat capacity times the square of the cross-section.
      */
     public double differential(int i) {
         double slope = Math.log(capacitances[i + 1] / capacitances[i]) / (resistances[i + 1] - resistances[i]);

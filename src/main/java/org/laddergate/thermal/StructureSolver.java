@@ -1,8 +1,8 @@
 package org.laddergate.thermal;
 
 /**
- * From a cooling curve to the points of its structure function, by one plan: spectrum, Foster network, ladder, cumulation.
- * Not thread-safe: it owns its scratch arrays, and allocates nothing while solving.
+ * From a cooling curve to the points of its structure function, by one plan: spectrum, Foster network, ladder,
+ * cumulation. Not thread-safe: it owns its scratch arrays, and allocates nothing while solving.
  */
 public final class StructureSolver {
     private final SpectrumPlan plan;
@@ -29,13 +29,17 @@ public final class StructureSolver {
         this.capacitances = new double[n + 1];
     }
 
-    /** Solves for a curve at the plan's times [K or deg C]; the results are read from this object until the next call. */
+    /**
+     * Solves for a curve at the plan's times [K or deg C]; the results are read from this object until the next call.
+     */
     public void solve(double[] temperatures) {
         plan.solveInto(temperatures, amplitudes, spectrumWork);
-        int rungs = FosterToCauer.computeLadderInto(amplitudes, timeConstants, timeConstants.length, rungR, rungC, ladderWork);
+        int rungs = FosterToCauer.computeLadderInto(amplitudes, timeConstants, timeConstants.length, rungR, rungC,
+                ladderWork);
         StructureFunction.cumulateInto(rungR, rungC, rungs, resistances, capacitances);
         points = rungs + 1;
-        // The last thousandth of the resistance belongs to time constants far beyond the record; its capacitance means nothing.
+        // The last thousandth of the resistance belongs to time constants far beyond the record; its capacitance means
+        // nothing.
         double end = 0.999 * resistances[rungs];
         while (points > 2 && resistances[points - 2] >= end) {
             points--;

@@ -6,6 +6,7 @@ import static org.junit.jupiter.api.Assertions.assertTrue;
 import java.util.List;
 import java.util.Random;
 import org.junit.jupiter.api.Test;
+import org.laddergate.limits.evidence.FamilyModel;
 
 class RegionEstimatorTest {
     private static final int M = 12;
@@ -57,11 +58,12 @@ class RegionEstimatorTest {
 
     @Test
     void readAllowing_somethingElse_isLessCertain() {
-        double[][] allowed = new double[M][M];
         double[] like = step(4);
-        for (int i = 0; i < M; i++) {
-            for (int j = 0; j < M; j++) {
-                allowed[i][j] = 100 * like[i] * like[j];
+        double[] contrasted = FamilyModel.contrasts(M).operate(like);
+        double[][] allowed = new double[M - 1][M - 1];
+        for (int i = 0; i < M - 1; i++) {
+            for (int j = 0; j < M - 1; j++) {
+                allowed[i][j] = 100 * contrasted[i] * contrasted[j];
             }
         }
         RegionEstimator.Reading reading = estimator().readAllowing(allowed, like);

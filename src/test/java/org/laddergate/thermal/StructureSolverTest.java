@@ -62,6 +62,25 @@ class StructureSolverTest {
         assertEquals(0.1327, meanDoubled, 0.03 * 0.1327);
     }
 
+    /** At 0.01 K noise the truth lies within twice the uncertainty we report, for every part that can be read. */
+    @Test
+    void uncertainty_noisyCurve_coversTheTruth() {
+        double[] t = column(0);
+        double[] y = cooling(1, TOTAL);
+        SpectrumSearch.Found golden = SpectrumSearch.smoothest(t, y, sigma(1.25e-3), POWER, Double.POSITIVE_INFINITY);
+        SpectrumPlan plan = SpectrumPlan.drawnTowards(golden.amplitudes(), t, sigma(0.01), POWER, Double.POSITIVE_INFINITY, 30,
+                3);
+        StructureSolver solver = new StructureSolver(plan);
+        solver.solve(noisy(y, new Random(8)));
+        double[][] parts = {{0, 0.00623, 0.0500}, {0.00623, 0.05, 0.0927}, {0, 0.05, 0.1427}, {0, 0.2, 0.1538}};
+        for (double[] part : parts) {
+            double u = StructureUncertainty.between(plan, y, sigma(0.01), part[0], part[1]);
+            double read = solver.resistanceAt(part[1]) - solver.resistanceAt(part[0]);
+            assertEquals(part[2], read, 2 * u, "between " + part[0] + " and " + part[1] + " J/K, u = " + u);
+            assertTrue(u < 0.03 * part[2], "an uncertainty that says something: " + u);
+        }
+    }
+
     /** Lawson and Hanson, chapter 23: conditions of the constrained minimum, on random problems. */
     @Test
     void minimise_randomProblems_meetTheOptimalityConditions() {

@@ -3,23 +3,27 @@ package org.laddergate.limits.evidence;
 import java.util.Optional;
 import org.apache.commons.math3.linear.Array2DRowRealMatrix;
 import org.apache.commons.math3.linear.EigenDecomposition;
+import org.apache.commons.math3.linear.RealMatrix;
 import org.laddergate.limits.FaultSignature;
+import org.laddergate.thermal.InnerProduct;
 
 /**
  * One way to explain a deviation from the golden family: a signature of uncertain size whose later shape may bend.
  *
- * <p>Definition: d ~ N(a s, S0 + a^2 (v^2 s s' + b^2 |s s'| o G)), o the element-wise product,
- * G(t,t') = exp(-(ln t - ln t')^2 / (2 l^2)): size a (1 +- v) times the signature s, with a smooth relative error b of
- * correlation length l in ln t. Where s is still zero nothing may happen: heat cannot report a fault before it gets there.
- * The evidence is the mean over a short list of sizes a of the likelihood ratio to the family N(0, S0).
+ * <p>Definition: d ~ N(a s, S0 + a^2 (v^2 s s' + b^2 |s s'| o G)), o the element-wise product, G(t,t') = exp(-(ln t -
+ * ln t')^2 / (2 l^2)): size a (1 +- v) times the signature s, with a smooth relative error b of correlation length l
+ * in ln t. Where s is still zero nothing may happen: heat cannot report a fault before it gets there. The evidence is
+ * the mean over a short list of sizes a of the likelihood ratio to the family N(0, S0).
  *
- * <p>Method: in whitened coordinates K = v^2 s s' + b^2 |s s'| o G has the eigenpairs (l_i, u_i); with y = U'z, c = U's,
- * ln L(a) = a s'z - a^2 s's/2 + sum (q/(1+q)) (y - a c)^2 / 2 - sum ln(1+q) / 2, q = a^2 l. All but y and s'z is prepared.
+ * <p>Method: in whitened coordinates K = v^2 s s' + b^2 |s s'| o G has the eigenpairs (l_i, u_i); with y = U'z, c =
+ * U's, ln L(a) = a s'z - a^2 s's/2 + sum (q/(1+q)) (y - a c)^2 / 2 - sum ln(1+q) / 2, q = a^2 l. All but y and s'z is
+ * prepared.
  *
- * <p>Source: Gaussian likelihood ratio with the matrix inversion and determinant lemmas; the causal bending kernel is our
- * own and described in docs/numerics.md.
+ * <p>Source: Gaussian likelihood ratio with the matrix inversion and determinant lemmas; the causal bending kernel is
+ * our own and described in docs/numerics.md.
  *
- * <p>Error: directions whose variance is below 1e-6 of the family's are dropped, which changes ln L by less than 1e-6 z^2.
+ * <p>Error: directions whose variance is below 1e-6 of the family's are dropped, which changes ln L by less than 1e-6
+ * z^2.
  *
  * <p>Cost: rank times (m - 1) multiplications plus sizes times rank, no allocation. Immutable.
  */
@@ -29,9 +33,9 @@ public final class Explanation {
 
     private final Optional<FaultSignature> signature;
     private final double logWeight;
-    private final double[] shape;
     private final double spread;
-    private final double[][] bending;
+    private final double[] contrastShape;
+    private final double[][] contrastBending;
     private final double[] whitenedShape;
     private final double shapeSquared;
     private final double[][] directions;
@@ -43,9 +47,12 @@ public final class Explanation {
     private Explanation(Builder b, FamilyModel family) {
         this.signature = b.signature;
         this.logWeight = Math.log(b.weight);
-        this.shape = b.shape;
         this.spread = b.spread;
-        this.bending = b.bending();
+        double[][] bending = b.bending();
+        RealMatrix contrasts = FamilyModel.contrasts(b.shape.length);
+        this.contrastShape = contrasts.operate(b.shape);
+        this.contrastBending = contrasts.multiply(new Array2DRowRealMatrix(bending, false))
+                .multiply(contrasts.transpose()).getData();
         this.whitenedShape = family.whiten(b.shape);
         this.shapeSquared = FamilyModel.tSquared(whitenedShape);
         this.sizes = b.sizes.clone();
@@ -60,7 +67,7 @@ public final class Explanation {
         along = new double[rank];
         for (int i = 0; i < rank; i++) {
             directions[i] = eigen.getEigenvector(i).toArray();
-            along[i] = dot(directions[i], whitenedShape);
+            along[i] = InnerProduct.of(directions[i], whitenedShape);
         }
         shrink = new double[sizes.length][rank];
         constant = new double[sizes.length];
@@ -110,9 +117,9 @@ public final class Explanation {
     public double logEvidence(double[] whitened, double[] scratch) {
         int rank = directions.length;
         for (int i = 0; i < rank; i++) {
-            scratch[i] = dot(directions[i], whitened);
+            scratch[i] = InnerProduct.of(directions[i], whitened);
         }
-        double projected = dot(whitenedShape, whitened);
+        double projected = InnerProduct.of(whitenedShape, whitened);
         double best = Double.NEGATIVE_INFINITY;
         double sum = 0;
         for (int k = 0; k < sizes.length; k++) {
@@ -134,33 +141,30 @@ public final class Explanation {
     }
 
     /**
-     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + 0.16 b^2 |s s'| o G) [K^2].
-     * Once a fault is named its signature is known better than while all were weighed; with the full bending no second fault
-     * could ever be seen behind a large first one.
+     * What this explanation at a given size may have done to the curve: a^2 ((1 + v^2) s s' + 0.16 b^2 |s s'| o G)
+     * [K^2]. Once a fault is named its signature is known better than while all were weighed; with the full bending no
+     * second fault could ever be seen behind a large first one.
+     *
+     * @return covariance in the coordinates of {@link FamilyModel#contrasts}, (m - 1) by (m - 1)
      */
     public double[][] allowance(double size) {
-        int m = shape.length;
-        double[][] out = new double[m][m];
-        for (int i = 0; i < m; i++) {
-            for (int j = 0; j < m; j++) {
-                out[i][j] = size * size * (ALLOWED_BENDING * bending[i][j]
-                        + (1 + spread * spread) * shape[i] * shape[j]);
+        int n = contrastShape.length;
+        double[][] out = new double[n][n];
+        for (int i = 0; i < n; i++) {
+            for (int j = 0; j < n; j++) {
+                out[i][j] = size * size * (ALLOWED_BENDING * contrastBending[i][j]
+                        + (1 + spread * spread) * contrastShape[i] * contrastShape[j]);
             }
         }
         return out;
     }
 
-    /** Generalised least squares size of the signature in a deviation, in units of the signature; 1 for a free explanation [1]. */
+    /**
+     * Generalised least squares size of the signature in a deviation, in units of the signature; 1 for a free
+     * explanation [1].
+     */
     public double size(double[] whitened) {
-        return shapeSquared > 0 ? dot(whitenedShape, whitened) / shapeSquared : 1;
-    }
-
-    static double dot(double[] a, double[] b) {
-        double sum = 0;
-        for (int i = 0; i < a.length; i++) {
-            sum += a[i] * b[i];
-        }
-        return sum;
+        return shapeSquared > 0 ? InnerProduct.of(whitenedShape, whitened) / shapeSquared : 1;
     }
 
     /** Collects what an explanation needs. */

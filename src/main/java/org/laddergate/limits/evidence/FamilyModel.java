@@ -4,18 +4,19 @@ import org.apache.commons.math3.linear.Array2DRowRealMatrix;
 import org.apache.commons.math3.linear.CholeskyDecomposition;
 import org.apache.commons.math3.linear.LUDecomposition;
 import org.apache.commons.math3.linear.RealMatrix;
+import org.laddergate.thermal.InnerProduct;
 
 /**
  * The golden family as a normal distribution of deviations from the golden mean, in comparison bins.
  *
  * <p>Definition: d ~ N(c 1, S0) with an arbitrary offset c (the temperature of the heat sink is nobody's business) and
- * S0 = F F' + b^2 sum |f f'| o G + N (1 + f) + (g h)(g h)', where F holds the leading factors f of the golden covariance,
- * b lets each of them bend smoothly (G(t,t') = exp(-(ln t - ln t')^2/2)), because a unit three sigma out is not three
- * times a unit one sigma out, N is diagonal with the measurement noise, f is a floor against a noise estimate that is too
- * good, and g h is the golden drop scaled by the uncertainty of the power step.
+ * S0 = F F' + b^2 sum |f f'| o G + N (1 + f) + (g h)(g h)', where F holds the leading factors f of the golden
+ * covariance, b lets each of them bend smoothly (G(t,t') = exp(-(ln t - ln t')^2/2)), because a unit three sigma out
+ * is not three times a unit one sigma out, N is diagonal with the measurement noise, f is a floor against a noise
+ * estimate that is too good, and g h is the golden drop scaled by the uncertainty of the power step.
  *
- * <p>Method: the offset is removed by m - 1 orthonormal contrasts (Helmert), S0 is factored once, and deviations are then
- * whitened by one matrix product: z = L^-1 B d, so that z ~ N(0, I) for a member of the family.
+ * <p>Method: the offset is removed by m - 1 orthonormal contrasts (Helmert), S0 is factored once, and deviations are
+ * then whitened by one matrix product: z = L^-1 B d, so that z ~ N(0, I) for a member of the family.
  *
  * <p>Source: factor model of a covariance as in Tipping and Bishop, Probabilistic principal component analysis, J. R.
  * Statist. Soc. B 61 (1999) 611; the rest is ordinary multivariate normal theory.
@@ -103,7 +104,10 @@ public final class FamilyModel {
         return s;
     }
 
-    /** The same matrix with its lower half copied from the upper: products differ in rounding, which Commons Math refuses. */
+    /**
+     * The same matrix with its lower half copied from the upper: products differ in rounding, which Commons Math
+     * refuses.
+     */
     public static RealMatrix symmetrised(RealMatrix matrix) {
         for (int i = 0; i < matrix.getRowDimension(); i++) {
             for (int j = 0; j < i; j++) {
@@ -154,12 +158,7 @@ public final class FamilyModel {
      */
     public void whitenInto(double[] deviationKelvin, double[] out) {
         for (int i = 0; i < out.length; i++) {
-            double[] row = whitening[i];
-            double sum = 0;
-            for (int j = 0; j < row.length; j++) {
-                sum += row[j] * deviationKelvin[j];
-            }
-            out[i] = sum;
+            out[i] = InnerProduct.of(whitening[i], deviationKelvin);
         }
     }
 

@@ -83,8 +83,8 @@ final class SubjectCatalogue {
     }
 
     /**
-     * Joints go wrong, crystals hardly ever: the region of the heated layer alone, which has no void signatures, gets a tenth
-     * of a joint's prior (common practice, no source).
+     * Joints go wrong, crystals hardly ever: the region of the heated layer alone, which has no void signatures, gets
+     * a tenth of a joint's prior (common practice, no source).
      */
     private double priorWeight(Region region) {
         boolean joint = !model.fromLayers() || model.signatures().stream()
@@ -124,8 +124,8 @@ final class SubjectCatalogue {
     }
 
     /**
-     * Sizes of a fault of unknown shape: from an eighth of the region's resistance to four times; without a layer table, where
-     * a thin region's resistance is known badly, on to a deviation of a third of the golden drop.
+     * Sizes of a fault of unknown shape: from an eighth of the region's resistance to four times; without a layer
+     * table, where a thin region's resistance is known badly, on to a deviation of a third of the golden drop.
      */
     private double[] unknownSizes(FaultSignature slight) {
         double unit = 1 / slight.severity();

@@ -62,8 +62,8 @@ public final class LimitFiles implements LimitStore {
                 String hash = DurableFiles.sha256(text);
                 String[] last = life.get(revision);
                 if (last != null && !last[3].equals(hash)) {
-                    throw new IllegalStateException("Limit file " + file + " was changed after its release: its content hash "
-                            + "is " + hash + ", released was " + last[3] + ". Restore the released file, or learn and "
+                    throw new IllegalStateException("Limit file " + file + " was changed after its release: its content "
+                            + "hash is " + hash + ", released was " + last[3] + ". Restore the released file, or learn and "
                             + "release a new revision.");
                 }
                 LimitState state = last == null ? LimitState.DRAFT : LimitState.valueOf(last[1].toUpperCase(Locale.ROOT));
@@ -76,7 +76,8 @@ public final class LimitFiles implements LimitStore {
         }
         for (int revision : life.keySet()) {
             if (!own.containsKey(revision)) {
-                throw new IllegalStateException("Limit file of released revision " + revision + " is missing in " + folder);
+                throw new IllegalStateException("Limit file of released revision " + revision + " is missing in "
+                        + folder);
             }
         }
         sets.put(folder.getFileName().toString(), own);

@@ -43,7 +43,8 @@ final class LimitText {
     private static void model(SectionText.Writer w, GoldenModel m) {
         w.section("golden family").value("first_edge_s", m.firstEdgeSeconds()).value("last_edge_s", m.lastEdgeSeconds())
                 .value("bins_per_decade", m.binsPerDecade()).value("in_family_limit", m.inFamilyLimit())
-                .value("shape_limit", m.shapeLimit()).value("family_bend", m.familyBend()).value("from_layers", m.fromLayers());
+                .value("shape_limit", m.shapeLimit()).value("family_bend", m.familyBend())
+                .value("from_layers", m.fromLayers());
         w.section("envelope").row("capacitance_J_per_K", "lower_K_per_W", "upper_K_per_W");
         for (int i = 0; i < m.envelope().capacitancesJoulesPerKelvin().length; i++) {
             w.row(m.envelope().capacitancesJoulesPerKelvin()[i], m.envelope().lowerKelvinPerWatt()[i],
@@ -144,7 +145,8 @@ final class LimitText {
                 vectors(s, "comparison noise")[0], vectors(s, "family factors"), family.number("family_bend"),
                 family.number("in_family_limit"),
                 family.number("shape_limit"), network.column("resistance_K_per_W"), network.column("time_constant_s"),
-                signatures, spread(ProductText.section(s, "family spread")), Boolean.parseBoolean(family.text("from_layers")),
+                signatures, spread(ProductText.section(s, "family spread")),
+                Boolean.parseBoolean(family.text("from_layers")),
                 ProductText.section(s, "golden spectrum").column("amplitude_K_per_W"),
                 new Envelope(envelope.column("capacitance_J_per_K"), envelope.column("lower_K_per_W"),
                         envelope.column("upper_K_per_W")));
