@@ -51,8 +51,8 @@ class PopulationMakerTest {
     }
 
     /**
-     * Source: README of the reference population kestrel, "Detectability": standard deviations of 300 production units. Of 60
-     * units ours are within 30 % of them, three standard errors of a standard deviation.
+     * Source: README of the reference population kestrel, "Detectability": standard deviations of 300 production units.
+     * Of 60 units ours are within 30 % of them, three standard errors of a standard deviation.
      */
     @Test
     @Tag("reference")
@@ -80,7 +80,8 @@ class PopulationMakerTest {
         new PopulationMaker(small, 7).write(folder.resolve("a"), 1, 0, 1);
         new PopulationMaker(small, 7).write(folder.resolve("b"), 1, 0, 1);
         for (String file : List.of("golden.csv.gz", "faulty.csv.gz", "truth.csv", "layers.csv", "measurement.json")) {
-            assertEquals(-1, Files.mismatch(folder.resolve("a").resolve(file), folder.resolve("b").resolve(file)), file);
+            assertEquals(-1, Files.mismatch(folder.resolve("a").resolve(file), folder.resolve("b").resolve(file)),
+                    file);
         }
     }
 
@@ -94,7 +95,8 @@ class PopulationMakerTest {
         assertEquals(population.faultClasses().size(), classes.size(), "no class twice");
         for (List<DemoFault> faults : classes) {
             PopulationUnit unit = new PopulationUnit(population, faults,
-                    faults.stream().mapToDouble(DemoFault::severity).toArray(), nominal.thickness(), nominal.conductivity());
+                    faults.stream().mapToDouble(DemoFault::severity).toArray(), nominal.thickness(),
+                    nominal.conductivity());
             ConductionModel model = unit.model();
             for (DemoFault fault : faults) {
                 assertTrue(unit.shiftKelvinPerWatt(fault.region(), model) > 0, fault.toString());
@@ -114,7 +116,8 @@ class PopulationMakerTest {
     }
 
     private List<String> unzipped(String file) throws IOException {
-        try (GZIPInputStream in = new GZIPInputStream(new ByteArrayInputStream(Files.readAllBytes(folder.resolve(file))))) {
+        byte[] zipped = Files.readAllBytes(folder.resolve(file));
+        try (GZIPInputStream in = new GZIPInputStream(new ByteArrayInputStream(zipped))) {
             return new String(in.readAllBytes(), StandardCharsets.UTF_8).lines().toList();
         }
     }
