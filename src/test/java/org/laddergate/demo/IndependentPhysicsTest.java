@@ -39,8 +39,8 @@ class IndependentPhysicsTest {
     }
 
     /**
-     * 97 % of detected faults in a region at fault, which with some twenty of them means at most one elsewhere; at most 4
-     * of 60 healthy parts rejected (2 % within binomial reach). A third of the classes is too weak to be found always.
+     * 97 % of detected faults in a region at fault, which with some twenty of them means at most one elsewhere; at most
+     * 4 of 60 healthy parts rejected (2 % within binomial reach). A third of the classes is too weak to be found always.
      */
     @ParameterizedTest
     @MethodSource("populations")
