@@ -3,12 +3,13 @@ package org.laddergate.demo;
 /**
  * Symmetric positive definite band matrix and its Cholesky factor A = L L', lower band stored by columns.
  *
- * <p>Method: left-looking by columns; the inner loop adds a multiple of one column to another, which the compiler turns into
- * vector instructions (a row-wise dot product it does not).
+ * <p>Method: left-looking by columns; the inner loop adds a multiple of one column to another, which the compiler turns
+ * into vector instructions (a row-wise dot product it does not).
  *
  * <p>Source: Golub and Van Loan, Matrix Computations (2013), section 4.3.5.
  *
- * <p>Cost: n b^2 additions and multiplications for the factor, 4 n b for a solution. Not thread-safe while being filled.
+ * <p>Cost: n b^2 additions and multiplications for the factor, 4 n b for a solution. Not thread-safe while being
+ * filled.
  */
 final class BandMatrix {
     private final int size;

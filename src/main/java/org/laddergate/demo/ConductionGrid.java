@@ -6,20 +6,20 @@ import java.util.TreeMap;
 import org.laddergate.limits.Layer;
 
 /**
- * Finite volumes in r and z of a stack of discs: temperatures live on planes between the elements of z, so that the heated
- * face and every interface have their own, and in the middle of the rings of r, so that areas are exact.
+ * Finite volumes in r and z of a stack of discs: temperatures live on planes between the elements of z, so that the
+ * heated face and every interface have their own, and in the middle of the rings of r, so that areas are exact.
  *
- * <p>Definition: C dT/dt = -A T + f P, C diagonal, A symmetric positive definite. Half the heat capacity of an element goes
- * to the plane above it and half to the one below; conduction along r lives on the planes in the same way.
+ * <p>Definition: C dT/dt = -A T + f P, C diagonal, A symmetric positive definite. Half the heat capacity of an element
+ * goes to the plane above it and half to the one below; conduction along r lives on the planes in the same way.
  *
- * <p>Method: lines on every interface, radius and ring edge; between them the elements grow from a size set by the detail at
- * hand, see {@link #lines}. Conductances along r are those of the logarithmic profile between the rings' rms radii.
- * Cells are numbered along the shorter side of the grid, which is the half bandwidth.
+ * <p>Method: lines on every interface, radius and ring edge; between them the elements grow from a size set by the
+ * detail at hand, see {@link #lines}. Conductances along r are those of the logarithmic profile between the rings' rms
+ * radii. Cells are numbered along the shorter side of the grid, which is the half bandwidth.
  *
  * <p>Source: finite volumes as in Patankar, Numerical Heat Transfer and Fluid Flow (1980), chapter 4.
  *
- * <p>Error: see {@link ConductionModel}. Second order in the element size except at the edges of voids and of the heated
- * area, where the field is singular and the lines crowd.
+ * <p>Error: see {@link ConductionModel}. Second order in the element size except at the edges of voids and of the
+ * heated area, where the field is singular and the lines crowd.
  *
  * <p>Cost: 1,000 to 3,000 cells. Immutable.
  */
@@ -50,7 +50,8 @@ final class ConductionGrid {
      * @param film       film coefficient under the last layer [W/(m^2 K)]; infinite for an isothermal face
      * @param refinement factor on the number of elements, 1 for normal work [1]
      */
-    ConductionGrid(List<Layer> layers, double heatedAreaSquareMetres, double film, List<AirRing> rings, double refinement) {
+    ConductionGrid(List<Layer> layers, double heatedAreaSquareMetres, double film, List<AirRing> rings,
+            double refinement) {
         this.layers = layers;
         this.rings = rings;
         double heatedRadius = Math.sqrt(heatedAreaSquareMetres / Math.PI);
@@ -220,8 +221,8 @@ final class ConductionGrid {
     /**
      * Elements of a layer. The heated layer starts with about a micrometre at the heated face, a small fraction of the
      * diffusion length at 10 microseconds; interfaces, where heat turns sideways, are finer than the inside. A poor
-     * conductor between good ones carries heat straight through and needs few. No layer starts with elements longer than a
-     * quarter of the diffusion length at the time when heat gets there.
+     * conductor between good ones carries heat straight through and needs few. No layer starts with elements longer
+     * than a quarter of the diffusion length at the time when heat gets there.
      */
     private double[] slices(int index, double refinement) {
         double t = layers.get(index).thicknessMetres();
@@ -306,8 +307,9 @@ final class ConductionGrid {
     }
 
     /**
-     * Lines between two marks: the element size is {@code first} and {@code last} at the ends and grows by {@code growth}
-     * per length inwards up to {@code largest}; the number is rounded up and the lines follow the integral of 1 / size.
+     * Lines between two marks: the element size is {@code first} and {@code last} at the ends and grows by {@code
+     * growth} per length inwards up to {@code largest}; the number is rounded up and the lines follow the integral of 1
+     * / size.
      */
     static double[] lines(double from, double to, double first, double last, double largest, double growth) {
         double[] sum = new double[SAMPLES + 1];

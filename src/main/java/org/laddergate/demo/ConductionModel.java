@@ -12,27 +12,27 @@ import org.laddergate.thermal.FosterNetwork;
  * The true physics of an invented part: heat conduction in a stack of discs, reduced to a Foster network of the mean
  * temperature of the heated disc.
  *
- * <p>It shares no code with the conduction model that fault signatures are worked out with, on purpose: a screener must not be
- * tried on parts made by the model it has learnt from.
+ * <p>It shares no code with the conduction model that fault signatures are worked out with, on purpose: a screener must
+ * not be tried on parts made by the model it has learnt from.
  *
- * <p>Definition: rho c dT/dt = div(k grad T) in r and z; every layer is a disc of its area; 1 W enters evenly through a disc in
- * the middle of the top; side walls and shoulders are adiabatic; the bottom gives heat to a coolant through a film, or is
- * isothermal. Voids are rings of still air.
+ * <p>Definition: rho c dT/dt = div(k grad T) in r and z; every layer is a disc of its area; 1 W enters evenly through a
+ * disc in the middle of the top; side walls and shoulders are adiabatic; the bottom gives heat to a coolant through a
+ * film, or is isothermal. Voids are rings of still air.
  *
- * <p>Method: {@link ConductionGrid}; Galerkin projection of C dT/dt = -A T + f P on the solutions of (A + s C) x = f for s = 0
- * and shifts s evenly spaced in log s (rational Krylov subspace, real shifts), orthonormal in the capacity product; the small
- * symmetric problem is diagonalised. The shifts reach from a tenth of the slowest rate the stack can have to 1e7 / s, 2.2 a
- * decade.
+ * <p>Method: {@link ConductionGrid}; Galerkin projection of C dT/dt = -A T + f P on the solutions of (A + s C) x = f
+ * for s = 0 and shifts s evenly spaced in log s (rational Krylov subspace, real shifts), orthonormal in the capacity
+ * product; the small symmetric problem is diagonalised. The shifts reach from a tenth of the slowest rate the stack can
+ * have to 1e7 / s, 2.2 a decade.
  *
  * <p>Source: Antoulas, Approximation of Large-Scale Dynamical Systems (2005), chapter 11.
  *
  * <p>Domain: at least one layer; heated area at most that of the first layer; film coefficient positive or infinite.
  *
- * <p>Error: see ConductionModelTest for the figures from 10 microseconds on, against exact one-dimensional solutions and an
- * independent two-dimensional program.
+ * <p>Error: see ConductionModelTest for the figures from 10 microseconds on, against exact one-dimensional solutions
+ * and an independent two-dimensional program.
  *
- * <p>Identities: all stages are positive; the resistances, and the layer shares with the film, add up to the steady resistance
- * of the grid; in steady state all heat leaves through the bottom.
+ * <p>Identities: all stages are positive; the resistances, and the layer shares with the film, add up to the steady
+ * resistance of the grid; in steady state all heat leaves through the bottom.
  *
  * <p>Cost: some twenty band factorisations of 1,000 to 3,000 cells. Immutable.
  */
@@ -68,7 +68,8 @@ final class ConductionModel {
             double refinement) {
         if (layers.isEmpty() || !(heatedAreaSquareMetres > 0)
                 || heatedAreaSquareMetres > layers.get(0).areaSquareMetres() * (1 + 1e-9)) {
-            throw new IllegalArgumentException("the heated " + heatedAreaSquareMetres + " m2 must lie on the first layer");
+            throw new IllegalArgumentException("the heated " + heatedAreaSquareMetres
+                    + " m2 must lie on the first layer");
         }
         if (!(film > 0)) {
             throw new IllegalArgumentException("film coefficient " + film + " is not positive");

@@ -9,11 +9,11 @@ import org.laddergate.limits.Layer;
 import org.laddergate.limits.RegionRole;
 
 /**
- * Invented products far from each other in size, build, pulse length and noise. None describes a real part; material values
- * are handbook values from memory, constant with temperature.
+ * Invented products far from each other in size, build, pulse length and noise. None describes a real part; material
+ * values are handbook values from memory, constant with temperature.
  */
 final class InventedPopulations {
-    /** A large thin silicon die soldered on a ceramic substrate, on a copper baseplate: thermally slow, ample signal. */
+    /** A large thin silicon die soldered on a ceramic substrate, on a copper baseplate: slow, ample signal. */
     static final Population HERON = new Population("heron", List.of(
             layer("die", "die", 120, 100, 130, 1.65e6),
             layer("attach", "attach", 90, 100, 50, 1.65e6),

@@ -5,7 +5,8 @@ import java.util.Map;
 import org.laddergate.limits.Layer;
 
 /**
- * An invented product as a population of parts: how it is built, how parts differ, how they are measured, what goes wrong.
+ * An invented product as a population of parts: how it is built, how parts differ, how they are measured, what goes
+ * wrong.
  *
  * @param name                name of the product and of its folder
  * @param layers              nominal layers from the heated face down

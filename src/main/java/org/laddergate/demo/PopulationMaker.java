@@ -18,8 +18,8 @@ import java.util.zip.GZIPOutputStream;
 import org.laddergate.limits.Layer;
 
 /**
- * Writes populations of invented parts with known truth, to develop and try a screener on: curves as gzipped CSV, one record a
- * row, and the truth beside them, in the columns of the reference population kestrel.
+ * Writes populations of invented parts with known truth, to develop and try a screener on: curves as gzipped CSV, one
+ * record a row, and the truth beside them, in the columns of the reference population kestrel.
  *
  * <p>Deterministic for a seed. A unit takes about a tenth of a second.
  */
@@ -72,7 +72,8 @@ final class PopulationMaker {
         Files.move(whole, folder.resolve("truth.csv"), StandardCopyOption.REPLACE_EXISTING);
     }
 
-    private void writeSet(Path folder, String set, List<List<DemoFault>> units, StringBuilder truth) throws IOException {
+    private void writeSet(Path folder, String set, List<List<DemoFault>> units, StringBuilder truth)
+            throws IOException {
         try (Writer curves = new OutputStreamWriter(
                 new GZIPOutputStream(Files.newOutputStream(folder.resolve(set + ".csv.gz"))), StandardCharsets.UTF_8)) {
             curves.write("unit_id");
@@ -81,8 +82,8 @@ final class PopulationMaker {
             }
             curves.write("\n");
             for (int n = 0; n < units.size(); n++) {
-                String id = String.format(Locale.ROOT, "%s%s%04d", population.name().substring(0, 1), set.substring(0, 1),
-                        n + 1).toUpperCase(Locale.ROOT);
+                String id = String.format(Locale.ROOT, "%.1s%.1s%04d", population.name(), set, n + 1)
+                        .toUpperCase(Locale.ROOT);
                 PopulationUnit unit = PopulationUnit.draw(population, units.get(n), random);
                 ConductionModel model = unit.model();
                 curves.write(id);
@@ -96,15 +97,17 @@ final class PopulationMaker {
     }
 
     private String truthHead() {
-        StringBuilder head = new StringBuilder("unit_id,set,region,kind,severity,region_2,kind_2,severity_2,R_total_K_per_W");
+        StringBuilder head = new StringBuilder(
+                "unit_id,set,region,kind,severity,region_2,kind_2,severity_2,R_total_K_per_W");
         for (String region : population.regions()) {
             head.append(",shift_").append(region).append("_K_per_W,shift_").append(region).append("_relative");
         }
         population.regions().forEach(r -> head.append(",share_").append(r).append("_K_per_W"));
         head.append(",severity_drawn,severity_drawn_2");
         for (Layer layer : population.layers()) {
-            head.append(population.spreadOf(layer).thickness() > 0 ? ",factor_" + layer.name() + "_thickness" : "");
-            head.append(population.spreadOf(layer).conductivity() > 0 ? ",factor_" + layer.name() + "_conductivity" : "");
+            Population.Spread spread = population.spreadOf(layer);
+            head.append(spread.thickness() > 0 ? ",factor_" + layer.name() + "_thickness" : "");
+            head.append(spread.conductivity() > 0 ? ",factor_" + layer.name() + "_conductivity" : "");
         }
         return head.append('\n').toString();
     }
@@ -114,7 +117,8 @@ final class PopulationMaker {
         for (int f = 0; f < 2; f++) {
             if (f < unit.faults().size()) {
                 DemoFault fault = unit.faults().get(f);
-                row.append(',').append(fault.region()).append(',').append(kind(fault)).append(',').append(fault.severity());
+                row.append(',').append(fault.region()).append(',').append(kind(fault)).append(',')
+                        .append(fault.severity());
             } else {
                 row.append(f == 0 ? ",none,," : ",,,");
             }
@@ -155,12 +159,13 @@ final class PopulationMaker {
     }
 
     private String layerTable() {
-        StringBuilder table = new StringBuilder("name,thickness_m,conductivity_W_per_mK,heat_capacity_J_per_m3K,area_m2,"
-                + "heat_capacity_J_per_K,share_of_total_resistance_K_per_W,region\n");
+        StringBuilder table = new StringBuilder("name,thickness_m,conductivity_W_per_mK,heat_capacity_J_per_m3K,"
+                + "area_m2,heat_capacity_J_per_K,share_of_total_resistance_K_per_W,region\n");
         for (int i = 0; i < population.layers().size(); i++) {
             Layer l = population.layers().get(i);
             table.append(String.join(",", l.name(), number(l.thicknessMetres(), 6),
-                    number(l.conductivityWattsPerMetreKelvin(), 6), number(l.heatCapacityJoulesPerCubicMetreKelvin(), 6),
+                    number(l.conductivityWattsPerMetreKelvin(), 6),
+                    number(l.heatCapacityJoulesPerCubicMetreKelvin(), 6),
                     number(l.areaSquareMetres(), 6), number(l.heatCapacityJoulesPerCubicMetreKelvin()
                             * l.thicknessMetres() * l.areaSquareMetres(), 6), number(nominal.shareKelvinPerWatt(i), 6),
                     l.region())).append('\n');

@@ -59,7 +59,7 @@ record PopulationUnit(Population population, List<DemoFault> faults, double[] dr
         return model("");
     }
 
-    /** Steady resistance that this region adds: the part as it is minus the part with this region back to nominal [K/W]. */
+    /** What this region adds to the steady resistance: the part as it is minus with this region nominal [K/W]. */
     double shiftKelvinPerWatt(String region, ConductionModel asIs) {
         return asIs.steadyResistanceKelvinPerWatt() - model(region).steadyResistanceKelvinPerWatt();
     }
@@ -81,8 +81,8 @@ record PopulationUnit(Population population, List<DemoFault> faults, double[] dr
             if (fault.shape() == DemoFault.Shape.THICK) {
                 built.set(at, restored ? built.get(at) : scaled(built.get(at), 1 + drawnSeverities[f], 1));
             } else {
-                AirRing ring = fault.shape() == DemoFault.Shape.CENTRE_VOID ? AirRing.centre(at, area, drawnSeverities[f])
-                        : AirRing.rim(at, area, drawnSeverities[f]);
+                AirRing ring = fault.shape() == DemoFault.Shape.CENTRE_VOID
+                        ? AirRing.centre(at, area, drawnSeverities[f]) : AirRing.rim(at, area, drawnSeverities[f]);
                 rings.add(restored ? ring.linesOnly() : ring);
             }
         }

@@ -9,12 +9,12 @@ import org.laddergate.thermal.FosterNetwork;
  * A simulated tester: samples a cooling part every microsecond, averages into log-time bins, adds noise, the electrical
  * switching transient and a slow drift of the base.
  *
- * <p>Definition: T(t) = T_0 + P sum R_j (1 - exp(-t_h/tau_j)) exp(-t/tau_j) + E exp(-t/tau_e) + drift t / t_end + noise; a bin
- * holds the mean over its samples and is stamped with their mean time.
+ * <p>Definition: T(t) = T_0 + P sum R_j (1 - exp(-t_h/tau_j)) exp(-t/tau_j) + E exp(-t/tau_e) + drift t / t_end +
+ * noise; a bin holds the mean over its samples and is stamped with their mean time.
  *
  * <p>Method: bin edges are 10 microseconds times 10^(i/50) rounded to whole samples, empty bins dropped; the mean of an
- * exponential over equally spaced samples is a geometric series, summed in closed form. White noise falls with the square root
- * of the samples in the bin, of which at most a thousand count, and never below a floor.
+ * exponential over equally spaced samples is a geometric series, summed in closed form. White noise falls with the
+ * square root of the samples in the bin, of which at most a thousand count, and never below a floor.
  *
  * <p>Source: none; the model of an invented tester, the same as that of the reference population kestrel.
  *
@@ -45,9 +45,9 @@ final class RawRecorder {
      * @param switchingSeconds    its time constant [s]
      * @param driftKelvin         largest drift at the end of the record, evenly drawn from both signs [K]
      */
-    record Setup(double powerWatts, double heatingSeconds, double recordSeconds, double coolantCelsius, double noiseKelvin,
-            double noiseFloorKelvin, double switchingKelvin, double switchingSpread, double switchingSeconds,
-            double driftKelvin) {}
+    record Setup(double powerWatts, double heatingSeconds, double recordSeconds, double coolantCelsius,
+            double noiseKelvin, double noiseFloorKelvin, double switchingKelvin, double switchingSpread,
+            double switchingSeconds, double driftKelvin) {}
 
     RawRecorder(Setup setup) {
         this.setup = setup;

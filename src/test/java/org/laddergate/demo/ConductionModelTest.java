@@ -25,9 +25,9 @@ class ConductionModelTest {
     private static final double AREA = 1e-4;
 
     /**
-     * Closed form of a rod heated at one end and held at the other (Carslaw and Jaeger, Conduction of Heat in Solids, 1959,
-     * section 3.4): R_n = 8R/(pi^2(2n-1)^2), tau_n = 4RC/(pi^2(2n-1)^2). Tolerance: a quarter of a per cent, the error this
-     * grid is made for.
+     * Closed form of a rod heated at one end and held at the other (Carslaw and Jaeger, Conduction of Heat in Solids,
+     * 1959, section 3.4): R_n = 8R/(pi^2(2n-1)^2), tau_n = 4RC/(pi^2(2n-1)^2). Tolerance: a quarter of a per cent, the
+     * error this grid is made for.
      */
     @Test
     @Tag("reference")
@@ -75,7 +75,8 @@ class ConductionModelTest {
     }
 
     private static JsonNode structure(String name) throws IOException {
-        try (InputStream in = ConductionModelTest.class.getResourceAsStream("/reference/thermal/analytic-structures.json")) {
+        try (InputStream in = ConductionModelTest.class
+                .getResourceAsStream("/reference/thermal/analytic-structures.json")) {
             for (JsonNode s : new ObjectMapper().readTree(in).get("structures")) {
                 if (s.get("name").asText().equals(name)) {
                     return s;
@@ -100,8 +101,8 @@ class ConductionModelTest {
     }
 
     /**
-     * Source: README of the reference population kestrel, table of detectability, "total, mK/W": the fault alone, all else
-     * nominal. Printed to 0.1 mK/W, itself within 0.8 % of its own finer grid; tolerance 1.5 % and half a digit.
+     * Source: README of the reference population kestrel, table of detectability, "total, mK/W": the fault alone, all
+     * else nominal. Printed to 0.1 mK/W, itself within 0.8 % of its own finer grid; tolerance 1.5 % and half a digit.
      */
     @ParameterizedTest
     @CsvSource({"attach,CENTRE_VOID,0.04,4.7", "attach,CENTRE_VOID,0.08,14.5", "attach,CENTRE_VOID,0.15,41.8",
@@ -151,7 +152,7 @@ class ConductionModelTest {
         assertEquals(sum, model.network().totalResistanceKelvinPerWatt(), 1e-9);
     }
 
-    /** Metamorphic: four times the shifts change nothing, so the reduction is finished; the steady state is in the basis. */
+    /** Metamorphic: four times the shifts change nothing, so the reduction is finished. */
     @Test
     @Tag("metamorphic")
     void network_moreShifts_sameResponse() {

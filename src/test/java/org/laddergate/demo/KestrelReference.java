@@ -17,8 +17,8 @@ import org.laddergate.limits.Layer;
 import org.laddergate.limits.RegionRole;
 
 /**
- * The reference population "kestrel", made by another program (README.md beside the data), in the terms of this room: its
- * nominal product and the true factors of its units.
+ * The reference population "kestrel", made by another program (README.md beside the data), in the terms of this room:
+ * its nominal product and the true factors of its units.
  */
 final class KestrelReference {
     static final double HEATED_AREA = 2.209e-5;
@@ -82,12 +82,13 @@ final class KestrelReference {
             }
         }
         double[] thickness = kestrel.layers().stream()
-                .mapToDouble(l -> Double.parseDouble(row.getOrDefault("factor_" + l.name() + "_thickness", "1"))).toArray();
+                .mapToDouble(l -> Double.parseDouble(row.getOrDefault("factor_" + l.name() + "_thickness", "1")))
+                .toArray();
         double[] conductivity = kestrel.layers().stream()
                 .mapToDouble(l -> Double.parseDouble(row.getOrDefault("factor_" + l.name() + "_conductivity", "1")))
                 .toArray();
-        return new PopulationUnit(kestrel, faults, severities.stream().mapToDouble(Double::doubleValue).toArray(), thickness,
-                conductivity);
+        return new PopulationUnit(kestrel, faults, severities.stream().mapToDouble(Double::doubleValue).toArray(),
+                thickness, conductivity);
     }
 
     static List<String[]> rows(String file) {
